@@ -1,0 +1,136 @@
+// Numbers to and from iostreams, independent of locale and stream flags.
+//
+// ISO C++ asks every engine for << and >>. These helpers write plain decimal digits (and hex
+// for reals, so that they return to the bit), whatever locale, base or width the stream has,
+// and on garbage set failbit. Only <iosfwd> is needed here: a program that prints has <ostream>.
+
+#ifndef LEAT_CORE_TEXT_HPP
+#define LEAT_CORE_TEXT_HPP
+
+#include <bit>
+#include <cstdint>
+#include <iosfwd>
+
+namespace leat::detail {
+
+template <class Char, class Traits>
+void write_char(std::basic_ostream<Char, Traits>& os, char c) {
+    os.put(os.widen(c));
+}
+
+/// Writes x in decimal.
+template <class Char, class Traits>
+void write_unsigned(std::basic_ostream<Char, Traits>& os, std::uint64_t x) {
+    char digits[20];
+    int n = 0;
+    do {
+        digits[n++] = static_cast<char>('0' + static_cast<int>(x % 10));
+        x /= 10;
+    } while (x != 0);
+    while (n > 0) {
+        write_char(os, digits[--n]);
+    }
+}
+
+/// Writes a real as the hex digits of its bits: exact, and the same in any locale.
+template <class Char, class Traits>
+void write_real(std::basic_ostream<Char, Traits>& os, double x) {
+    write_char(os, 'x');
+    const std::uint64_t bits = std::bit_cast<std::uint64_t>(x);
+    for (int shift = 60; shift >= 0; shift -= 4) {
+        write_char(os, "0123456789abcdef"[(bits >> shift) & 15u]);
+    }
+}
+
+/// Skips white space and reads one token character by character through `accept(c)`; false at the
+/// first character it does not take (which stays in the stream).
+template <class Char, class Traits>
+void skip_space(std::basic_istream<Char, Traits>& is) {
+    for (;;) {
+        const auto c = is.peek();
+        if (Traits::eq_int_type(c, Traits::eof())) {
+            return;
+        }
+        const char narrow = is.narrow(Traits::to_char_type(c), '\0');
+        if (narrow != ' ' && narrow != '\t' && narrow != '\n' && narrow != '\r') {
+            return;
+        }
+        is.get();
+    }
+}
+
+/// The next character as a digit value below `base`, or -1; consumes it only when it is one.
+template <class Char, class Traits>
+int read_digit(std::basic_istream<Char, Traits>& is, int base) {
+    const auto c = is.peek();
+    if (Traits::eq_int_type(c, Traits::eof())) {
+        // Reading up to the end of the text is no failure: keep eofbit, nothing more.
+        return -1;
+    }
+    const char narrow = is.narrow(Traits::to_char_type(c), '\0');
+    int digit = -1;
+    if (narrow >= '0' && narrow <= '9') {
+        digit = narrow - '0';
+    } else if (narrow >= 'a' && narrow <= 'f') {
+        digit = narrow - 'a' + 10;
+    }
+    if (digit < 0 || digit >= base) {
+        return -1;
+    }
+    is.get();
+    return digit;
+}
+
+/// Reads a decimal number of at most `max`; on anything else sets failbit and returns false.
+template <class Char, class Traits>
+bool read_unsigned(std::basic_istream<Char, Traits>& is, std::uint64_t max, std::uint64_t& x) {
+    if (is.good()) {
+        skip_space(is);
+        std::uint64_t value = 0;
+        int digit = read_digit(is, 10);
+        bool sound = digit >= 0;
+        for (; sound && digit >= 0; digit = read_digit(is, 10)) {
+            const auto d = static_cast<std::uint64_t>(digit);
+            sound = value <= (max - d) / 10 && d <= max;
+            value = value * 10 + d;
+        }
+        if (sound) {
+            x = value;
+            return true;
+        }
+    }
+    is.setstate(std::basic_istream<Char, Traits>::failbit);
+    return false;
+}
+
+/// Reads what write_real wrote; on anything else sets failbit and returns false.
+template <class Char, class Traits>
+bool read_real(std::basic_istream<Char, Traits>& is, double& x) {
+    if (is.good()) {
+        skip_space(is);
+        const auto c = is.peek();
+        if (!Traits::eq_int_type(c, Traits::eof()) &&
+            is.narrow(Traits::to_char_type(c), '\0') == 'x') {
+            is.get();
+            std::uint64_t bits = 0;
+            int count = 0;
+            for (; count < 16; ++count) {
+                const int digit = read_digit(is, 16);
+                if (digit < 0) {
+                    break;
+                }
+                bits = (bits << 4) | static_cast<std::uint64_t>(digit);
+            }
+            if (count == 16) {
+                x = std::bit_cast<double>(bits);
+                return true;
+            }
+        }
+    }
+    is.setstate(std::basic_istream<Char, Traits>::failbit);
+    return false;
+}
+
+} // namespace leat::detail
+
+#endif
