@@ -1,0 +1,26 @@
+#!/bin/sh
+# Sets up, builds and runs the tests: sh cmake/test.sh [--slow] [options for ctest]
+set -eu
+
+root=$(cd "$(dirname "$0")/.." && pwd)
+. "$root/cmake/setup.sh"
+
+slow=OFF
+if [ "${1-}" = --slow ]; then
+    slow=ON
+    shift
+fi
+
+need_build_tools
+need pkgconf has_command pkg-config
+need libgtest-dev has_header gtest/gtest.h
+need nlohmann-json3-dev has_header nlohmann/json.hpp
+need libboost-dev has_header boost/math/distributions/students_t.hpp
+need libgsl-dev has_header gsl/gsl_cdf.h
+need libmpfr-dev has_header mpfr.h
+need libgmp-dev has_header gmp.h
+install_missing
+
+configure_and_build "$root/build/test" all -D LEAT_BUILD_TESTS=ON -D LEAT_BUILD_EXAMPLES=ON \
+    -D LEAT_BUILD_SLOW_TESTS=$slow -D LEAT_WARNINGS_AS_ERRORS="${LEAT_WARNINGS_AS_ERRORS:-OFF}"
+ctest --test-dir "$root/build/test" --output-on-failure --parallel "$(jobs)" "$@"

@@ -1,0 +1,2 @@
+// A planted fault for the weight test.
+#include <string>

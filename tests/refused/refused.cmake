@@ -1,0 +1,47 @@
+# Compiles ${file} as it is, which must succeed, then every case of it that must be refused.
+# The form of a case is described in CMakeLists.txt.
+
+cmake_minimum_required(VERSION 3.20)
+
+function(compile flags status text)
+    separate_arguments(flags UNIX_COMMAND "${flags}")
+    execute_process(
+        COMMAND "${compiler}" -std=c++20 -fsyntax-only "-I${include_dir}" ${flags} "${file}"
+        RESULT_VARIABLE result OUTPUT_VARIABLE printed ERROR_VARIABLE printed)
+    set(${status} "${result}" PARENT_SCOPE)
+    set(${text} "${printed}" PARENT_SCOPE)
+endfunction()
+
+compile("" status text)
+if(NOT status EQUAL 0)
+    message(FATAL_ERROR "${file}: the twins must compile:\n${text}")
+endif()
+
+set(count 0)
+file(STRINGS "${file}" cases REGEX "^// refused [0-9]+")
+foreach(case IN LISTS cases)
+    if(NOT case MATCHES "^// refused ([0-9]+)( \\(([a-z+]+)([^)]*)\\))?: (.+)$")
+        message(FATAL_ERROR "${file}: cannot read \"${case}\"")
+    endif()
+    set(number "${CMAKE_MATCH_1}")
+    set(only "${CMAKE_MATCH_3}")
+    set(flags "${CMAKE_MATCH_4}")
+    set(expected "${CMAKE_MATCH_5}")
+    math(EXPR count "${count} + 1")
+    if((only STREQUAL "g++" AND NOT compiler_id STREQUAL "GNU")
+       OR (only STREQUAL "clang++" AND NOT compiler_id MATCHES "Clang"))
+        continue()
+    endif()
+    compile("-DREFUSED=${number} ${flags}" status text)
+    if(status EQUAL 0)
+        message(FATAL_ERROR "${file}: case ${number} must not compile (${flags})")
+    endif()
+    string(FIND "${text}" "${expected}" at)
+    if(at EQUAL -1)
+        message(FATAL_ERROR
+            "${file}: case ${number} was refused, but not with \"${expected}\":\n${text}")
+    endif()
+endforeach()
+if(count EQUAL 0)
+    message(FATAL_ERROR "${file} has no case")
+endif()
