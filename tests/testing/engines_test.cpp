@@ -1,0 +1,76 @@
+// testing/engines.hpp: the engines return exactly what they say, and `scripted` counts.
+
+#include "leat/testing/engines.hpp"
+
+#include "leat/core/concepts.hpp"
+
+#include <gtest/gtest.h>
+
+#include <concepts>
+#include <cstdint>
+#include <random>
+#include <string>
+#include <vector>
+
+namespace {
+
+// ISO C++ [rand.req.urng]: usable wherever <random> asks for a generator.
+static_assert(std::uniform_random_bit_generator<leat::testing::scripted>);
+static_assert(std::uniform_random_bit_generator<leat::testing::all_ones32>);
+static_assert(leat::random_words<leat::scripted> && leat::random_words<leat::scripted32> &&
+              leat::random_words<leat::constant> && leat::random_words<leat::all_zeros> &&
+              leat::random_words<leat::all_ones>);
+static_assert(leat::all_ones{}() == 0xFFFFFFFFFFFFFFFFu && leat::all_ones32{}() == 0xFFFFFFFFu);
+static_assert(leat::all_zeros{}() == 0 && leat::constant{7}() == 7);
+static_assert(std::same_as<leat::scripted, leat::testing::scripted>);
+
+TEST(Scripted, ReturnsItsWordsInOrder) {
+    leat::scripted g{3, 0, ~std::uint64_t{0}};
+    EXPECT_EQ(g(), 3u);
+    EXPECT_EQ(g(), 0u);
+    EXPECT_EQ(g(), ~std::uint64_t{0});
+    EXPECT_EQ(g.asked(), 3u);
+
+    leat::scripted32 h{std::vector<std::uint32_t>{9, 8}};
+    EXPECT_EQ(h(), 9u);
+    EXPECT_EQ(h(), 8u);
+}
+
+TEST(Scripted, OneWordTooManyIsAnErrorThatSaysHowManyWereAskedFor) {
+    leat::scripted g{1, 2};
+    g();
+    g();
+    for (const char* const count : {"3", "4"}) {
+        try {
+            g();
+            FAIL() << "the script ran past its end";
+        } catch (const leat::stream_exhausted& e) {
+            EXPECT_EQ(std::string(e.what()), std::string("leat::scripted: the script holds 2 "
+                                                         "words, and ") +
+                                                 count + " were asked for");
+        }
+    }
+}
+
+TEST(Scripted, AnEmptyScriptIsAnEngineThatMustNotBeDrawnFrom) {
+    leat::scripted g{std::vector<std::uint64_t>{}};
+    EXPECT_THROW(g(), leat::stream_exhausted);
+}
+
+TEST(Scripted, CopiesGoTheirOwnWay) {
+    leat::scripted g{1, 2};
+    leat::scripted copy = g;
+    EXPECT_EQ(copy, g);
+    copy();
+    EXPECT_NE(copy, g);
+    EXPECT_EQ(g(), 1u);
+}
+
+TEST(Constant, NeverChanges) {
+    leat::constant g{42};
+    for (int i = 0; i < 1000; ++i) {
+        ASSERT_EQ(g(), 42u);
+    }
+}
+
+} // namespace
