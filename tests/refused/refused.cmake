@@ -3,6 +3,8 @@
 
 cmake_minimum_required(VERSION 3.20)
 
+set(ENV{LC_ALL} C) # compilers' quotation marks follow the locale
+
 function(compile flags status text)
     separate_arguments(flags UNIX_COMMAND "${flags}")
     execute_process(
