@@ -38,10 +38,10 @@ public:
         siphash s = *this;
         s.compress((words_ * 8) << 56); // the last block holds the length modulo 256
         s.v2_ ^= 0xeeu;
-        s.rounds<4>();
+        s.rounds(4);
         const std::uint64_t low = s.v0_ ^ s.v1_ ^ s.v2_ ^ s.v3_;
         s.v1_ ^= 0xddu;
-        s.rounds<4>();
+        s.rounds(4);
         return {low, s.v0_ ^ s.v1_ ^ s.v2_ ^ s.v3_};
     }
 
@@ -50,13 +50,12 @@ public:
 private:
     constexpr void compress(std::uint64_t word) noexcept {
         v3_ ^= word;
-        rounds<2>();
+        rounds(2);
         v0_ ^= word;
     }
 
-    template <int Count>
-    constexpr void rounds() noexcept {
-        for (int i = 0; i < Count; ++i) {
+    constexpr void rounds(int count) noexcept {
+        for (int i = 0; i < count; ++i) {
             v0_ += v1_;
             v1_ = std::rotl(v1_, 13) ^ v0_;
             v0_ = std::rotl(v0_, 32);
