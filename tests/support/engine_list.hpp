@@ -1,0 +1,56 @@
+// Every engine of leat, for the tests that all of them must pass. A new engine joins by one line in
+// `engines`, and one more below where its method forbids states.
+
+#ifndef LEAT_TESTS_SUPPORT_ENGINE_LIST_HPP
+#define LEAT_TESTS_SUPPORT_ENGINE_LIST_HPP
+
+#include "leat/engines/counter.hpp"
+#include "leat/engines/lehmer.hpp"
+#include "leat/engines/lehmer128.hpp"
+
+#include <gtest/gtest.h>
+
+#include <cstdint>
+#include <string>
+#include <vector>
+
+namespace leat_test {
+
+using engines = ::testing::Types<                          //
+    leat::minimal_standard,                                //
+    leat::minimal_standard_48271,                          //
+    leat::minimal_standard_69621,                          //
+    leat::lehmer<std::uint64_t, 37, 2305843009213693951u>, // a 64-bit modulus, 2^61 - 1
+    leat::lehmer128,                                       //
+    leat::splitmix64,                                      //
+    leat::philox4x32,                                      //
+    leat::philox4x64>;
+
+/// What an engine must refuse: seeds, and states in the form of its text (whole words).
+struct refusals {
+    std::vector<std::uint64_t> seeds;
+    std::vector<std::string> states;
+};
+
+template <class Engine>
+refusals refused_by(const Engine*) {
+    return {};
+}
+template <std::uint32_t multiplier>
+refusals refused_by(const leat::lehmer<std::uint32_t, multiplier, 2147483647>*) {
+    return {{0, 2147483647, 2147483648, 4294967297}, {"0", "2147483647", "4294967297"}};
+}
+inline refusals refused_by(const leat::lehmer<std::uint64_t, 37, 2305843009213693951u>*) {
+    return {{0, 2305843009213693951, ~0ull}, {"0", "2305843009213693951"}};
+}
+inline refusals refused_by(const leat::lehmer128*) {
+    return {{0, 2, 1ull << 63}, {"0 0", "0 1", "2 18446744073709551615"}};
+}
+inline refusals refused_by(const leat::philox4x32*) {
+    return {{}, {"0 0 0 0 0 0 4", "0 0 0 0 0 4294967296 0"}};
+}
+inline refusals refused_by(const leat::philox4x64*) { return {{}, {"0 0 0 0 0 0 4"}}; }
+
+} // namespace leat_test
+
+#endif
