@@ -1,0 +1,9 @@
+// Digests of the distributions.
+
+#include "digest/digest.hpp"
+
+namespace digests {
+
+void laws() {}
+
+} // namespace digests
