@@ -89,21 +89,24 @@ public:
             wide[2 * i] = spread(a[i]);
             wide[2 * i + 1] = spread(a[i] >> (word_bits / 2));
         }
-        for (std::size_t i = Size; i-- > 0;) {
-            // What stands in word Size + i is a multiple of x^n times x^(word_bits * i).
-            const Word folded = wide[Size + i];
-            residue r{};
-            for (std::size_t j = 0; j < 2 * sizeof(Word); ++j) {
-                const auto v = static_cast<std::size_t>(folded >> (4 * j) & 15u);
-                r = sum(r, multiples_[16 * j + v]);
-            }
-            for (std::size_t j = 0; j < Size; ++j) {
-                wide[i + j] ^= r[j];
-            }
-        }
         residue r{};
         for (std::size_t i = 0; i < Size; ++i) {
-            r[i] = wide[i];
+            r[i] = wide[Size + i];
+        }
+        // r * x^n + the lower half, by Horner's rule on the words of the lower half.
+        for (std::size_t i = Size; i-- > 0;) {
+            const Word out = r[Size - 1];
+            for (std::size_t j = Size - 1; j > 0; --j) {
+                r[j] = r[j - 1];
+            }
+            r[0] = wide[i];
+            for (std::size_t j = 0; j < 2 * sizeof(Word); ++j) {
+                const auto v = static_cast<std::size_t>(out >> (4 * j) & 15u);
+                const residue& multiple = multiples_[16 * j + v];
+                for (std::size_t k = 0; k < Size; ++k) {
+                    r[k] ^= multiple[k];
+                }
+            }
         }
         return r;
     }

@@ -74,9 +74,10 @@ constexpr State apply_polynomial(const Residue& p, State state) noexcept {
     State total{};
     for (const word coefficients : p) {
         for (int i = 0; i < 8 * static_cast<int>(sizeof(word)); ++i) {
-            const word mask = word{0} - (coefficients >> i & word{1});
-            for (std::size_t j = 0; j < state.size(); ++j) {
-                total[j] ^= state[j] & mask;
+            if ((coefficients >> i & 1u) != 0) {
+                for (std::size_t j = 0; j < state.size(); ++j) {
+                    total[j] ^= state[j];
+                }
             }
             Step::step(state);
         }
