@@ -14,7 +14,7 @@ table means stands in the header that uses it.
 """
 import struct
 import subprocess
-from mpmath import mp, mpf, floor, log, exp, sin, pi, loggamma, chebyfit, sqrt, quad, inf, erfc, bernoulli
+from mpmath import mp, mpf, floor, log, exp, sin, pi, loggamma, chebyfit, sqrt, erfc, bernoulli, zeta
 
 mp.dps = 60
 
@@ -182,6 +182,11 @@ def log_gamma():
     body += "/// B(2k) / (2k (2k - 1)), k = 1 to 9: Stirling's series in 1/x^(2k-1).\n"
     body += "inline constexpr double stirling_series[9] = {\n"
     body += rows([literal(double(bernoulli(2 * k) / (2 * k * (2 * k - 1)))) for k in range(1, 10)], 3)
+    body += "\n};\n"
+    body += "\n/// (ln Gamma(1 + 2x) - 2 ln Gamma(1 + x)) / x^2 as a power series in x: the coefficient of x^(n-2)\n"
+    body += "/// is (-1)^n zeta(n) (2^n - 2) / n (Abramowitz and Stegun, 6.1.33).\n"
+    body += "inline constexpr double weibull_spread[16] = {\n"
+    body += rows([literal(double((-1) ** n * zeta(n) * (mpf(2) ** n - 2) / n)) for n in range(2, 18)], 3)
     body += "\n};\n"
     body += constant("half_log_two_pi", double(log(2 * pi) / 2), "ln(2 pi) / 2")
     body += "\n} // namespace leat::detail\n"
