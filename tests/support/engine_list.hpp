@@ -4,9 +4,12 @@
 #ifndef LEAT_TESTS_SUPPORT_ENGINE_LIST_HPP
 #define LEAT_TESTS_SUPPORT_ENGINE_LIST_HPP
 
+#include "leat/engines/combined_recursive.hpp"
 #include "leat/engines/counter.hpp"
 #include "leat/engines/lehmer.hpp"
 #include "leat/engines/lehmer128.hpp"
+#include "leat/engines/shuffled.hpp"
+#include "leat/engines/multiply_with_carry.hpp"
 
 #include <gtest/gtest.h>
 
@@ -22,6 +25,10 @@ using engines = ::testing::Types<                          //
     leat::minimal_standard_69621,                          //
     leat::lehmer<std::uint64_t, 37, 2305843009213693951u>, // a 64-bit modulus, 2^61 - 1
     leat::lehmer128,                                       //
+    leat::mwc_lag4_32,                                     //
+    leat::mwc_lag1_32,                                     //
+    leat::mwc_lag1_64,                                     //
+    leat::mrg32k3a,                                        //
     leat::splitmix64,                                      //
     leat::philox4x32,                                      //
     leat::philox4x64>;
@@ -48,6 +55,22 @@ inline refusals refused_by(const leat::lehmer128*) {
 }
 inline refusals refused_by(const leat::philox4x32*) {
     return {{}, {"0 0 0 0 0 0 4", "0 0 0 0 0 4294967296 0"}};
+}
+inline refusals refused_by(const leat::mwc_lag4_32*) {
+    return {{},
+            {"0 0 0 0 0", "1 2 3 4 2111119494",
+             "4294967295 4294967295 4294967295 4294967295 2111119493", "4294967296 0 0 0 1"}};
+}
+inline refusals refused_by(const leat::mwc_lag1_32*) {
+    return {{}, {"0 0", "1 4294957665", "4294967295 4294957664"}};
+}
+inline refusals refused_by(const leat::mwc_lag1_64*) {
+    return {{}, {"0 0", "1 18446744073709550874", "18446744073709551615 18446744073709550873"}};
+}
+inline refusals refused_by(const leat::mrg32k3a*) {
+    return {{},
+            {"0 0 0 1 2 3", "1 2 3 0 0 0", "4294967087 1 1 1 1 1", "1 1 4294967087 1 1 1",
+             "1 1 1 4294944443 1 1", "1 1 1 1 1 4294944443"}};
 }
 inline refusals refused_by(const leat::philox4x64*) { return {{}, {"0 0 0 0 0 0 4"}}; }
 

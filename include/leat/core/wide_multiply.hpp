@@ -47,6 +47,18 @@ constexpr word_pair add(word_pair a, word_pair b) noexcept {
     return {low, a.high + b.high + (low < a.low ? 1u : 0u)};
 }
 
+/// a * b + c + d, which never exceeds two words: the step of multiple-word products.
+constexpr word_pair multiply_add_wide(std::uint64_t a, std::uint64_t b, std::uint64_t c,
+                                      std::uint64_t d) noexcept {
+#if defined(__SIZEOF_INT128__)
+    __extension__ using wide = unsigned __int128;
+    const wide sum = static_cast<wide>(a) * b + c + d;
+    return {static_cast<std::uint64_t>(sum), static_cast<std::uint64_t>(sum >> 64)};
+#else
+    return add(add(multiply_wide(a, b), {c, 0}), {d, 0});
+#endif
+}
+
 /// The product of two pairs, modulo 2^128.
 constexpr word_pair multiply(word_pair a, word_pair b) noexcept {
     word_pair product = multiply_wide(a.low, b.low);
