@@ -8,11 +8,13 @@
 #ifndef LEAT_STREAMS_REFILL_HPP
 #define LEAT_STREAMS_REFILL_HPP
 
+#include "leat/engines/kernels/philox.hpp"
 #include "leat/engines/philox.hpp"
 #include "leat/streams/path.hpp" // stream_place
 
 #include <array>
 #include <cstdint>
+#include <type_traits>
 
 namespace leat::detail {
 
@@ -29,14 +31,25 @@ constexpr std::array<std::uint64_t, 2> stream_block(stream_place place, std::uin
 /// How many words a stream keeps at hand: 16 blocks.
 constexpr std::uint64_t stream_buffer_words = 32;
 
-/// All words of 16 consecutive blocks, starting with block `first`.
-constexpr void refill(stream_place place, std::uint64_t first,
-                      std::array<std::uint64_t, stream_buffer_words>& words) noexcept {
-    for (std::size_t i = 0; i < stream_buffer_words / 2; ++i) {
+/// The same by the portable code alone: constant evaluation, and what kernels are tested against.
+constexpr void refill_portably(stream_place place, std::uint64_t first,
+                               std::uint64_t* words) noexcept {
+    for (std::uint64_t i = 0; i < stream_buffer_words / 2; ++i) {
         const auto pair = stream_block(place, first + i);
         words[2 * i] = pair[0];
         words[2 * i + 1] = pair[1];
     }
+}
+
+/// All words of 16 consecutive blocks, starting with block `first`: 32 words.
+constexpr void refill(stream_place place, std::uint64_t first, std::uint64_t* words) noexcept {
+#if LEAT_VECTOR_KERNELS
+    if (!std::is_constant_evaluated()) {
+        philox_stream_words(place.key, place.upper, first, words);
+        return;
+    }
+#endif
+    refill_portably(place, first, words);
 }
 
 } // namespace leat::detail

@@ -179,7 +179,7 @@ private:
             detail::exhausted("stream", address(), limit_);
         }
         seek(position()); // from the end of one buffer to the start of the next
-        detail::refill({key_, upper_}, base_ / 2, words_);
+        detail::refill({key_, upper_}, base_ / 2, words_.data());
         filled_ = true;
         set_end();
     }
