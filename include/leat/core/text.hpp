@@ -10,6 +10,7 @@
 #include <bit>
 #include <cstdint>
 #include <iosfwd>
+#include <limits>
 
 namespace leat::detail {
 
@@ -101,6 +102,47 @@ bool read_unsigned(std::basic_istream<Char, Traits>& is, std::uint64_t max, std:
     }
     is.setstate(std::basic_istream<Char, Traits>::failbit);
     return false;
+}
+
+/// Writes an integer of either sign in decimal.
+template <class Char, class Traits, class Int>
+void write_integer(std::basic_ostream<Char, Traits>& os, Int x) {
+    if (x < 0) {
+        write_char(os, '-');
+        write_unsigned(os, 0 - static_cast<std::uint64_t>(x));
+    } else {
+        write_unsigned(os, static_cast<std::uint64_t>(x));
+    }
+}
+
+/// Reads a decimal integer within Int; on anything else sets failbit and returns false.
+template <class Char, class Traits, class Int>
+bool read_integer(std::basic_istream<Char, Traits>& is, Int& x) {
+    auto max = static_cast<std::uint64_t>(std::numeric_limits<Int>::max());
+    bool negative = false;
+    if (std::numeric_limits<Int>::is_signed && is.good()) {
+        skip_space(is);
+        const auto next = [&is] { // '\0' at the end of the text
+            const auto c = is.peek();
+            return Traits::eq_int_type(c, Traits::eof()) ? '\0'
+                                                         : is.narrow(Traits::to_char_type(c), '\0');
+        };
+        if (next() == '-') {
+            is.get();
+            negative = true;
+            ++max;
+            if (next() < '0' || next() > '9') { // read_unsigned would skip white space
+                is.setstate(std::basic_istream<Char, Traits>::failbit);
+                return false;
+            }
+        }
+    }
+    std::uint64_t magnitude = 0;
+    if (!read_unsigned(is, max, magnitude)) {
+        return false;
+    }
+    x = static_cast<Int>(negative ? 0 - magnitude : magnitude);
+    return true;
 }
 
 /// Reads what write_real wrote; on anything else sets failbit and returns false.
