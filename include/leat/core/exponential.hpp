@@ -28,7 +28,7 @@ struct exp_pieces {
     std::int64_t exponent;
 };
 
-/// The pieces of e^(x + rest), |x| < 2000 and the rest below 2^-30 of x.
+/// The pieces of e^(x + rest), |x| < 2000 and the rest at most 2^-24 of x in size.
 constexpr exp_pieces exp_in_pieces(double x, double rest) noexcept {
     using real = strict<double>;
     // Adding and taking away 1.5 * 2^52 rounds to an integer, which then stands in the low bits.
@@ -48,7 +48,7 @@ constexpr exp_pieces exp_in_pieces(double x, double rest) noexcept {
     return {entry.value, (r + (series + entry.rest)).value, step >> 7};
 }
 
-/// e^(x + rest) with an exponent of its own; |rest| at most 2^-30 |x|. Beyond |x| = 2000 (where the
+/// e^(x + rest) with an exponent of its own; |rest| at most 2^-24 |x|. Beyond |x| = 2000 (where the
 /// product with any double is out of range) the exponent is put far out.
 constexpr scaled exp_scaled(double x, double rest = 0) noexcept {
     if (!(x < 2000)) {

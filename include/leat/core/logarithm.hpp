@@ -39,10 +39,11 @@ constexpr two_part log_parts(double x) noexcept {
     const logarithm_entry& entry = logarithm_table[(from_first >> 45) & 127];
     const real k = static_cast<double>(parts.exponent + static_cast<std::int64_t>(halve));
 
-    // r = c z - 1: c has 13 bits, so both products are exact, and so is the difference.
+    // r = c z - 1: c has 13 bits, so both products are exact, and so is the difference. Where it is
+    // smaller than the second product, the sum has few bits and is exact: no order need be asked.
     const double z_high = shortened(z, 21);
-    const two_part r = two_sum((real(z_high) * entry.reciprocal - 1.0).value,
-                               ((real(z) - z_high) * entry.reciprocal).value);
+    const two_part r = ordered_two_sum((real(z_high) * entry.reciprocal - 1.0).value,
+                                       ((real(z) - z_high) * entry.reciprocal).value);
     const real r1 = r.high;
 
     // The large terms, each sum with its error: (k ln 2 - ln c) + r - r^2 / 2.

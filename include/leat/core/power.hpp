@@ -7,7 +7,8 @@
 #ifndef LEAT_CORE_POWER_HPP
 #define LEAT_CORE_POWER_HPP
 
-#include "leat/core/error_free.hpp"
+#include "leat/core/barrier.hpp"
+#include "leat/core/error_free.hpp" // two_part
 #include "leat/core/exponential.hpp"
 #include "leat/core/logarithm.hpp"
 
@@ -17,15 +18,19 @@ namespace leat::detail {
 constexpr scaled power_scaled(double x, double y) noexcept {
     using real = strict<double>;
     const two_part log = log_parts(x);
-    const double size = held(y * log.high);
-    if (!(size < 2000 && size > -2000)) {
-        return exp_scaled(size);
+    // The leading halves have 26 bits each, so their product is exact.
+    const double log_high = shortened(log.high, 27);
+    const double y_high = shortened(y, 27);
+    const double high = held(y_high * log_high);
+    if (!(high < 2000 && high > -2000)) {
+        return exp_scaled(high);
     }
-    if (size < 0x1p-60 && size > -0x1p-60) { // 1, and where y is tiny its product's error subnormal
+    if (high < 0x1p-60 && high > -0x1p-60) { // nothing below may become subnormal
         return {1.0, 0};
     }
-    const two_part product = two_product(y, log.high);
-    return exp_scaled(product.high, (real(product.low) + real(y) * log.low).value);
+    const real log_low = (real(log.high) - log_high) + log.low;
+    const real low = (real(y) - y_high) * log_high + real(y) * log_low;
+    return exp_scaled(high, low.value);
 }
 
 /// x^y, saturating.

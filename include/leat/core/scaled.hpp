@@ -53,10 +53,10 @@ constexpr scaled split(double x) noexcept {
     return {std::bit_cast<double>((bits & fraction) | one), exponent - 1023};
 }
 
-/// The product, with its factor in [1, 2).
+/// The product. Factors from `split` and of powers lie near [1, 2), so a hundred may be multiplied
+/// before the factor itself could leave the range.
 constexpr scaled operator*(scaled a, scaled b) noexcept {
-    const scaled product = split(held(a.factor * b.factor));
-    return {product.factor, product.exponent + a.exponent + b.exponent};
+    return {held(a.factor * b.factor), a.exponent + b.exponent};
 }
 
 } // namespace leat::detail

@@ -20,22 +20,24 @@ constexpr Real into_positive(double x) noexcept {
     constexpr Real smallest = std::numeric_limits<Real>::min();
     constexpr Real largest = std::numeric_limits<Real>::max();
     // Compared before the conversion, which then neither overflows nor gives a subnormal number.
-    if (!(x > static_cast<double>(smallest))) [[unlikely]] {
-        return smallest;
+    if (x > static_cast<double>(smallest) && x < static_cast<double>(largest)) [[likely]] {
+        return static_cast<Real>(x);
     }
-    if (!(x < static_cast<double>(largest))) [[unlikely]] {
-        return largest;
-    }
-    return static_cast<Real>(x);
+    return x > 1 ? largest : smallest;
 }
 
 /// x of either sign, among the normal numbers.
 template <portable_real Real>
 constexpr Real into_signed(double x) noexcept {
     constexpr std::uint64_t sign = std::uint64_t{1} << 63;
+    constexpr auto smallest = static_cast<double>(std::numeric_limits<Real>::min());
+    constexpr auto largest = static_cast<double>(std::numeric_limits<Real>::max());
     const std::uint64_t bits = std::bit_cast<std::uint64_t>(x);
-    const Real size = into_positive<Real>(std::bit_cast<double>(bits & ~sign));
-    return (bits & sign) != 0 ? -size : size;
+    const double size = std::bit_cast<double>(bits & ~sign);
+    if (size > smallest && size < largest) [[likely]] {
+        return static_cast<Real>(x); // no branch on the sign, which no processor could predict
+    }
+    return (bits & sign) != 0 ? -into_positive<Real>(size) : into_positive<Real>(size);
 }
 
 } // namespace leat::detail
