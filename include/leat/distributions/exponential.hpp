@@ -75,7 +75,7 @@ public:
     using base::operator();
     /// A draw.
     template <random_words G>
-    [[nodiscard]] constexpr Real operator()(G& g) const {
+    [[nodiscard, gnu::always_inline]] constexpr Real operator()(G& g) const {
         const double e = detail::standard_exponential(g);
         return detail::into_positive<Real>(detail::held(e / static_cast<double>(rate())));
     }

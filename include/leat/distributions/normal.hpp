@@ -68,7 +68,7 @@ public:
     using base::operator();
     /// A draw.
     template <random_words G>
-    [[nodiscard]] constexpr Real operator()(G& g) const {
+    [[nodiscard, gnu::always_inline]] constexpr Real operator()(G& g) const {
         using real = detail::strict<double>;
         const double z = detail::standard_normal(g);
         const double x = (real(mean_()) + real(sd_()) * z).value;

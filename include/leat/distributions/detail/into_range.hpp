@@ -14,30 +14,39 @@
 
 namespace leat::detail {
 
+/// True where x lies between the smallest and the largest normal number, so that its conversion
+/// neither overflows nor gives a subnormal number.
+template <portable_real Real>
+constexpr bool well_inside(double x) noexcept {
+    return x > static_cast<double>(std::numeric_limits<Real>::min()) &&
+           x < static_cast<double>(std::numeric_limits<Real>::max());
+}
+
+/// The end of the range that x is at or beyond; its sign is kept.
+template <portable_real Real>
+[[gnu::cold, gnu::noinline]] constexpr Real end_of_range(double x) noexcept {
+    const Real sign = (std::bit_cast<std::uint64_t>(x) >> 63) != 0 ? Real{-1} : Real{1};
+    return sign *
+           (x > 1 || x < -1 ? std::numeric_limits<Real>::max() : std::numeric_limits<Real>::min());
+}
+
 /// x > 0 (or the 0 or infinity that it came out as), among the positive normal numbers.
 template <portable_real Real>
 constexpr Real into_positive(double x) noexcept {
-    constexpr Real smallest = std::numeric_limits<Real>::min();
-    constexpr Real largest = std::numeric_limits<Real>::max();
-    // Compared before the conversion, which then neither overflows nor gives a subnormal number.
-    if (x > static_cast<double>(smallest) && x < static_cast<double>(largest)) [[likely]] {
+    if (well_inside<Real>(x)) [[likely]] {
         return static_cast<Real>(x);
     }
-    return x > 1 ? largest : smallest;
+    return end_of_range<Real>(x);
 }
 
-/// x of either sign, among the normal numbers.
+/// x of either sign, among the normal numbers. No branch on the sign: it is a coin toss.
 template <portable_real Real>
 constexpr Real into_signed(double x) noexcept {
-    constexpr std::uint64_t sign = std::uint64_t{1} << 63;
-    constexpr auto smallest = static_cast<double>(std::numeric_limits<Real>::min());
-    constexpr auto largest = static_cast<double>(std::numeric_limits<Real>::max());
     const std::uint64_t bits = std::bit_cast<std::uint64_t>(x);
-    const double size = std::bit_cast<double>(bits & ~sign);
-    if (size > smallest && size < largest) [[likely]] {
-        return static_cast<Real>(x); // no branch on the sign, which no processor could predict
+    if (well_inside<Real>(std::bit_cast<double>(bits & ~(std::uint64_t{1} << 63)))) [[likely]] {
+        return static_cast<Real>(x);
     }
-    return (bits & sign) != 0 ? -into_positive<Real>(size) : into_positive<Real>(size);
+    return end_of_range<Real>(x);
 }
 
 } // namespace leat::detail

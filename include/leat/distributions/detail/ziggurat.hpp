@@ -30,6 +30,8 @@
 
 namespace leat::detail {
 
+// The fast paths are always inlined, for clang takes each value barrier for a call and would not.
+
 inline constexpr int ziggurat_trials = 32;
 
 /// The layer a word chooses.
@@ -73,7 +75,7 @@ template <random_words G>
 
 /// An exponential of rate 1, above 0.
 template <random_words G>
-constexpr double standard_exponential(G& g) {
+[[gnu::always_inline]] constexpr double standard_exponential(G& g) {
     const std::uint64_t word = word64(g);
     const ziggurat_layer& layer = exponential_layers[layer_of(word)];
     if (word < layer.bar) [[likely]] {
@@ -126,7 +128,7 @@ template <random_words G>
 
 /// A normal of mean 0 and standard deviation 1.
 template <random_words G>
-constexpr double standard_normal(G& g) {
+[[gnu::always_inline]] constexpr double standard_normal(G& g) {
     const std::uint64_t word = word64(g);
     const ziggurat_layer& layer = normal_layers[layer_of(word)];
     if (word < layer.bar) [[likely]] {
