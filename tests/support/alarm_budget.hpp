@@ -1,0 +1,107 @@
+// One budget of false alarms for the whole suite, and the check that spends it.
+//
+// Statistical tests run on fixed seeds, so they pass or fail for good; the false-alarm rate is the
+// probability that a right library fails when its sequences change. The arithmetic:
+//
+//   every check fails at p < 1e-10; the checks of all tests, declared in the table below, are
+//   added up at compile time; by the union bound (no independence needed) the suite's rate is at
+//   most their number times 1e-10, which must stay at or below 1e-6. That leaves room for 10000
+//   checks; with the few hundred here, p-values that are approximate by a factor of ten still keep
+//   the bound.
+//
+// A new statistical test adds a line: its name and the number of p-values it checks. A check that
+// is not declared, or one too many, fails.
+// Planted faults are the opposite: `is_rejected` asks that a wrong sampler falls below the same
+// level. They cannot cause a false alarm in the right one and are not counted.
+
+#ifndef LEAT_TESTS_SUPPORT_ALARM_BUDGET_HPP
+#define LEAT_TESTS_SUPPORT_ALARM_BUDGET_HPP
+
+#include "support/statistics.hpp"
+
+#include <gtest/gtest.h>
+
+#include <map>
+#include <string>
+#include <string_view>
+#include <vector>
+
+namespace leat_test {
+
+inline constexpr double check_level = 1e-10;
+inline constexpr double suite_alarm_rate = 1e-6;
+
+struct declared_checks {
+    std::string_view test;
+    int checks;
+};
+
+inline constexpr declared_checks alarm_budget[] = {
+    {"Statistics.KolmogorovSmirnovFindsNothingInUniforms", 1},
+    {"DiskGoodness.UnitDisk", 20},
+    {"DiskGoodness.DiskElsewhere", 21},
+    {"DiskGoodness.FloatDisk", 20},
+    {"EllipseGoodness.Turned", 20},
+    {"EllipseGoodness.ThinAndTurned", 20},
+    {"EllipseGoodness.Float", 20},
+    {"EllipseGoodness.TurnedByRejection", 20},
+    {"EllipseGoodness.PublishedValues", 6},
+    {"EllipseGoodness.PublishedValuesByRejection", 6},
+    {"PlantedFaults.SquareRootRadiusPasses", 20},
+    {"AlarmBudget.APValueBelowTheLevelFails", 1},
+};
+
+constexpr int all_declared_checks() {
+    int sum = 0;
+    for (const auto& entry : alarm_budget) {
+        sum += entry.checks;
+    }
+    return sum;
+}
+
+static_assert(all_declared_checks() * check_level <= suite_alarm_rate,
+              "the statistical checks together pass the suite's false-alarm rate");
+
+/// "Suite.Test" of the running test: the seed of its streams, and its line in the budget.
+inline std::string name_of_this_test() {
+    const auto* test = testing::UnitTest::GetInstance()->current_test_info();
+    return std::string(test->test_suite_name()) + "." + test->name();
+}
+
+/// Passes when p is at or above the level, and spends one check of the running test's budget.
+inline void check(const outcome& found) {
+    const std::string name = name_of_this_test();
+    static std::map<std::string, int> spent; // by test; the whole program is one thread
+    int allowed = 0;
+    for (const auto& entry : alarm_budget) {
+        if (entry.test == name) {
+            allowed = entry.checks;
+        }
+    }
+    EXPECT_LE(++spent[name], allowed)
+        << name << " makes more checks than support/alarm_budget.hpp declares";
+    EXPECT_GE(found.p, check_level) << found.what << ": statistic " << found.statistic << ", p "
+                                    << found.p << ", seed text \"" << name << "\"";
+}
+
+inline void check(const std::vector<outcome>& all) {
+    for (const auto& one : all) {
+        check(one);
+    }
+}
+
+/// For planted faults: at least one outcome falls below the level.
+inline testing::AssertionResult is_rejected(const std::vector<outcome>& all) {
+    if (smallest_p(all) < check_level) {
+        return testing::AssertionSuccess();
+    }
+    auto result = testing::AssertionFailure() << "the faulty sampler passed:";
+    for (const auto& one : all) {
+        result << "\n  " << one.what << ": statistic " << one.statistic << ", p " << one.p;
+    }
+    return result;
+}
+
+} // namespace leat_test
+
+#endif
