@@ -114,7 +114,7 @@ public:
     /// a^exponent.
     [[nodiscard]] constexpr residue power(const residue& a, std::uint64_t exponent) const noexcept {
         residue r = one();
-        for (int i = std::bit_width(exponent); i-- > 0;) {
+        for (int i = static_cast<int>(std::bit_width(exponent)); i-- > 0;) {
             r = square(r);
             if ((exponent >> i & 1u) != 0) {
                 r = product(r, a);

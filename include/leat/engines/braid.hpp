@@ -43,7 +43,7 @@ namespace leat {
 
 namespace detail {
 
-inline constexpr std::size_t braid_lanes = 16;
+inline constexpr std::uint32_t braid_lanes = 16;
 
 /// Word w of lane k stands at 16 w + k: equal words of all lanes side by side.
 using braid_state = std::array<std::uint64_t, 4 * braid_lanes>;
@@ -177,7 +177,7 @@ public:
         }
         next_ += static_cast<std::uint32_t>(distance.word(0) & 15u);
         if (next_ >= detail::braid_lanes) {
-            next_ -= static_cast<std::uint32_t>(detail::braid_lanes);
+            next_ -= detail::braid_lanes;
             detail::braid_step::step(lanes_);
         }
     }

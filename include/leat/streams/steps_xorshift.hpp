@@ -37,7 +37,7 @@ public:
     constexpr baby_steps(const gf2_ring<Word, 1>& ring, Word base, std::uint64_t count) noexcept {
         Word power = 1;
         for (std::uint64_t i = 0; i < count; ++i) {
-            std::size_t slot = first_slot(power);
+            std::uint32_t slot = first_slot(power);
             while (keys_[slot] != 0) {
                 slot = (slot + 1) % slots;
             }
@@ -49,7 +49,7 @@ public:
 
     /// The exponent of a power, or `most` where it is not among them.
     [[nodiscard]] constexpr std::uint64_t find(Word power) const noexcept {
-        for (std::size_t slot = first_slot(power); keys_[slot] != 0; slot = (slot + 1) % slots) {
+        for (std::uint32_t slot = first_slot(power); keys_[slot] != 0; slot = (slot + 1) % slots) {
             if (keys_[slot] == power) {
                 return exponents_[slot];
             }
@@ -58,9 +58,9 @@ public:
     }
 
 private:
-    static constexpr std::size_t slots = 2 * most;
-    static constexpr std::size_t first_slot(Word power) noexcept {
-        return static_cast<std::size_t>(std::uint64_t{power} * 0x9E3779B97F4A7C15u >> 54);
+    static constexpr std::uint32_t slots = 1024; // twice `most`
+    static constexpr std::uint32_t first_slot(Word power) noexcept {
+        return static_cast<std::uint32_t>(std::uint64_t{power} * 0x9E3779B97F4A7C15u >> 54);
     }
     std::array<Word, slots> keys_{}; // 0 is no power of anything here: an empty slot
     std::array<std::uint16_t, slots> exponents_{};
