@@ -4,12 +4,16 @@
 #ifndef LEAT_TESTS_SUPPORT_ENGINE_LIST_HPP
 #define LEAT_TESTS_SUPPORT_ENGINE_LIST_HPP
 
+#include "leat/engines/braid.hpp"
 #include "leat/engines/combined_recursive.hpp"
 #include "leat/engines/counter.hpp"
 #include "leat/engines/lehmer.hpp"
 #include "leat/engines/lehmer128.hpp"
-#include "leat/engines/shuffled.hpp"
 #include "leat/engines/multiply_with_carry.hpp"
+#include "leat/engines/shuffled.hpp"
+#include "leat/engines/xoroshiro.hpp"
+#include "leat/engines/xorshift.hpp"
+#include "leat/engines/xoshiro.hpp"
 
 #include <gtest/gtest.h>
 
@@ -30,8 +34,19 @@ using engines = ::testing::Types<                          //
     leat::mwc_lag1_64,                                     //
     leat::mrg32k3a,                                        //
     leat::splitmix64,                                      //
+    leat::xorshift32,                                      //
+    leat::xorshift64,                                      //
+    leat::xorshift128,                                     //
+    leat::xorshift64_star,                                 //
+    leat::xorshift128_plus,                                //
+    leat::xoroshiro128_plus_plus,                          //
+    leat::xoshiro256_plus_plus,                            //
+    leat::xoshiro256_plus,                                 //
+    leat::xoshiro256_star_star,                            //
+    leat::xoshiro256_braid,                                //
     leat::philox4x32,                                      //
-    leat::philox4x64>;
+    leat::philox4x64, leat::shuffled<leat::minimal_standard, 256>,
+    leat::shuffled_by<leat::minimal_standard_48271, leat::minimal_standard, 128>>;
 
 /// What an engine must refuse: seeds, and states in the form of its text (whole words).
 struct refusals {
@@ -72,7 +87,26 @@ inline refusals refused_by(const leat::mrg32k3a*) {
             {"0 0 0 1 2 3", "1 2 3 0 0 0", "4294967087 1 1 1 1 1", "1 1 4294967087 1 1 1",
              "1 1 1 4294944443 1 1", "1 1 1 1 1 4294944443"}};
 }
+template <std::size_t K>
+refusals refused_by(const leat::shuffled<leat::minimal_standard, K>*) {
+    return {{0, 2147483647, 4294967297}, {}};
+}
 inline refusals refused_by(const leat::philox4x64*) { return {{}, {"0 0 0 0 0 0 4"}}; }
+
+inline refusals refused_by(const leat::xorshift32*) {
+    return {{0, 4294967296, ~0ull}, {"0", "4294967296"}};
+}
+inline refusals refused_by(const leat::xorshift64*) { return {{0}, {"0"}}; }
+inline refusals refused_by(const leat::xorshift64_star*) { return {{0}, {"0"}}; }
+inline refusals refused_by(const leat::xorshift128*) {
+    return {{}, {"0 0 0 0", "1 4294967296 0 0"}};
+}
+inline refusals refused_by(const leat::xorshift128_plus*) { return {{}, {"0 0"}}; }
+inline refusals refused_by(const leat::xoroshiro128_plus_plus*) { return {{}, {"0 0"}}; }
+inline refusals refused_by(const leat::xoshiro256_plus_plus*) { return {{}, {"0 0 0 0"}}; }
+inline refusals refused_by(const leat::xoshiro256_plus*) { return {{}, {"0 0 0 0"}}; }
+inline refusals refused_by(const leat::xoshiro256_star_star*) { return {{}, {"0 0 0 0"}}; }
+inline refusals refused_by(const leat::xoshiro256_braid*) { return {{}, {"0 0 0 0"}}; }
 
 } // namespace leat_test
 
