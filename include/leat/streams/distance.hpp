@@ -71,6 +71,20 @@ constexpr wide_integer power_of_two_modulo(std::uint64_t k, const wide_integer& 
     return power;
 }
 
+/// Appends a wide integer in decimal to a message.
+inline message& print(message& m, wide_integer x) {
+    char digits[310]; // 2^1024 has 309
+    char* first = digits + sizeof digits - 1;
+    *first = '\0';
+    const wide_integer ten{10};
+    do {
+        const wide_integer quotient = x / ten;
+        *--first = static_cast<char>('0' + (x - quotient * ten).word(0));
+        x = quotient;
+    } while (x != wide_integer{});
+    return m.text(first);
+}
+
 /// The number of steps as given: a wide integer, or a power of two that may be too large for one.
 class step_count {
 public:
@@ -110,10 +124,24 @@ public:
         return value_ < m ? value_ : value_ % m;
     }
 
+    friend message& print(message& m, const step_count& n) {
+        return n.fits() ? print(m, n.value_) : m.text("2^").value(n.large_exponent_);
+    }
+
 private:
     wide_integer value_;
     std::uint64_t large_exponent_ = 0; // k of 2^k, where k >= 1024
 };
+
+/// Refuses a number of steps, of any size: "leat::NAME: PARAMETER = VALUE, ALLOWED".
+[[noreturn, gnu::cold, gnu::noinline]] inline void refuse_steps(const char* name,
+                                                                const char* parameter,
+                                                                const step_count& value,
+                                                                const char* allowed) {
+    message m;
+    m.text("leat::").text(name).text(": ").text(parameter).text(" = ");
+    raise<invalid_parameter>(print(m, value).text(", ").text(allowed));
+}
 
 } // namespace detail
 } // namespace leat
