@@ -28,6 +28,16 @@ TEST(splitmix64, gives_the_reference_draws) {
     }
 }
 
+// Source: the entry double53.splitmix64-seed-42 of engines.json: the upper 53 bits over 2^53.
+TEST(splitmix64, gives_the_reference_53_bit_reals) {
+    const auto& entry = leat_test::reference_entry("engines.double53.splitmix64-seed-42");
+    LEAT_TEST_REFERENCE(entry);
+    leat::splitmix64 e{42};
+    for (const auto& real : entry["expected"]["first"]) {
+        EXPECT_EQ(static_cast<double>(e() >> 11) / 9007199254740992.0, real.get<double>());
+    }
+}
+
 template <class E>
 std::array<typename E::result_type, 4> four(const leat_test::json& list) {
     std::array<typename E::result_type, 4> result{};

@@ -84,26 +84,46 @@ TEST(congruential, reaches_the_reference_states) {
     }
 }
 
-// Source: the entries lcg64.* and lcg48.* of engines.json.
+// Source: the group lcg of engines.json, in which each entry shows its states in its own way.
 TEST(congruential, steps_as_published) {
     for (const auto& entry : leat_test::reference_group("engines", "lcg")) {
         LEAT_TEST_REFERENCE(entry);
         const auto& given = entry["parameters"];
         const auto& expected = entry["expected"];
-        const leat::congruential method{word(given["a"]), word(given["c"]),
-                                        wide(given["m"]).bit_width() - 1};
-        const auto follow = [&method](std::uint64_t x, const leat_test::json& states) {
-            for (const auto& state : states) {
+        const leat::congruential method{word(given["a"]), word(given["c"]), bits_of(given["m"])};
+        const auto follow = [&method](std::uint64_t x, const leat_test::json& list, auto output) {
+            for (const auto& value : list) {
                 x = method.next(x);
-                EXPECT_EQ(x, word(state));
+                EXPECT_EQ(std::to_string(output(x)), value.template get<std::string>());
             }
         };
+        const auto whole = [](std::uint64_t x) { return x; };
+        const auto upper32 = [](std::uint64_t x) {
+            return static_cast<std::int32_t>(static_cast<std::uint32_t>(x >> 16));
+        };
+        const std::string id = entry["id"];
         if (expected.contains("first_from_1")) {
-            follow(1, expected["first_from_1"]);
+            follow(1, expected["first_from_1"], whole);
             EXPECT_EQ(method.after(1, 10000), word(expected["x10000_from_1"]));
-        } else if (expected.contains("states")) {
-            follow(word(given.contains("initial_state") ? given["initial_state"] : given["x0"]),
-                   expected["states"]);
+            if (expected.contains("first_from_42")) {
+                follow(42, expected["first_from_42"], whole);
+            }
+        } else if (id == "engines.lcg.randu") {
+            follow(1, expected["first"], whole);
+            EXPECT_EQ(method.after(1, 10000), word(expected["x10000"]));
+        } else if (id == "engines.lcg48.posix") {
+            follow(word(given["initial_state"]), expected["states"], whole);
+            follow(word(given["initial_state"]), expected["top31"],
+                   [](std::uint64_t x) { return x >> 17; });
+            follow(word(given["initial_state"]), expected["top32_signed"], upper32);
+        } else if (id == "engines.lcg48.java") {
+            // Its seeds are scrambled by the multiplier.
+            follow((word(given["seed"]) ^ method.multiplier), expected["next32_signed"], upper32);
+            follow(12345u ^ method.multiplier, expected["next32_signed_seed_12345"], upper32);
+        } else {
+            ASSERT_EQ(id, "engines.lcg.cstandard");
+            follow(word(given["seed"]), expected["first"],
+                   [](std::uint64_t x) { return x / 65536 % 32768; });
         }
     }
 }
