@@ -48,6 +48,14 @@ inline constexpr declared_checks alarm_budget[] = {
     {"EllipseGoodness.PublishedValues", 6},
     {"EllipseGoodness.PublishedValuesByRejection", 6},
     {"PlantedFaults.SquareRootRadiusPasses", 20},
+    {"LawGoodness.Normal", 45},
+    {"LawGoodness.Exponential", 30},
+    {"LawGoodness.Weibull", 48},
+    {"LawGoodness.Lognormal", 63},
+    {"LawGoodness.Gamma", 105},
+    {"LawGoodness.GammaLogarithm", 4},
+    {"PlantedFaults.TextbookZigguratPasses", 18},
+    {"PlantedFaults.GammaWithTheRightBoostPasses", 3},
     {"AlarmBudget.APValueBelowTheLevelFails", 1},
 };
 
