@@ -26,7 +26,7 @@ template <class Real>
         asm("" : "+x"(x));
 #elif defined(__aarch64__) || (defined(__arm__) && defined(__ARM_FP) && !defined(__SOFTFP__))
         asm("" : "+w"(x));
-#elif defined(__riscv_flen) || defined(__s390__) || defined(__powerpc__)
+#elif (defined(__riscv_flen) && __riscv_flen >= 64) || defined(__s390__) || defined(__powerpc__)
         asm("" : "+f"(x));
 #else
         asm("" : "+m"(x));

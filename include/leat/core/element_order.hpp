@@ -1,14 +1,14 @@
 // The order of an element modulo a wide m: how often it is multiplied by itself to come back to 1.
 //
 // It gives the true period of a congruential generator, at compile time, from its parameters alone.
-// (For an m of one word see core/modular.hpp, which is exact for every m.) It is found where m is
-// prime and m - 1 is a product of primes below 256 and of one more factor that is prime or below
-// 2^64: this holds for every safe prime (m = 2 q + 1) and for many others. Elsewhere 0 is returned,
-// "not known".
+// (For an m of one word see core/modular.hpp, which is exact for every m.) It is found where the
+// power m - 1 of the element is 1, as for every prime m, and m - 1 is a product of primes below 256
+// and of one more factor that is prime or below 2^64: so for every safe prime (m = 2 q + 1), and
+// for many others. Elsewhere 0 is returned, "not known".
 //
-// That q is prime is judged by the strong test of Miller and Rabin, to the bases 2, 3 and 5: sound
-// for parameters chosen for their merits; composites made to deceive it exist. Beyond about 200
-// bits clang needs a larger -fconstexpr-steps.
+// That the one more factor is prime is judged by the strong test of Miller and Rabin, to the bases
+// 2, 3 and 5: sound for parameters chosen for their merits; composites made to deceive it exist.
+// Beyond about 200 bits clang needs a larger -fconstexpr-steps.
 //
 // Sources: Knuth, TAOCP vol. 2, 3.2.1.2 and 4.5.4, Algorithm P; Cohen, A Course in Computational
 // Algebraic Number Theory, 1993, Algorithm 1.4.3 (order of an element).

@@ -43,8 +43,7 @@ void write_real(std::basic_ostream<Char, Traits>& os, double x) {
     }
 }
 
-/// Skips white space and reads one token character by character through `accept(c)`; false at the
-/// first character it does not take (which stays in the stream).
+/// Skips blanks, tabs and line ends.
 template <class Char, class Traits>
 void skip_space(std::basic_istream<Char, Traits>& is) {
     for (;;) {

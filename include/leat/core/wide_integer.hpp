@@ -28,9 +28,10 @@ public:
 
     constexpr wide_integer() noexcept = default;
 
-    /// From any integer type; a negative value is refused.
+    /// From any integer type of up to 64 bits; a negative value is refused. Implicit, since a
+    /// distance is usually a plain integer.
     template <std::integral Int>
-    constexpr wide_integer(Int x) { // implicit: a distance is usually a plain integer
+    requires(sizeof(Int) <= 8) constexpr wide_integer(Int x) {
         if constexpr (std::signed_integral<Int>) {
             if (x < 0) {
                 detail::refuse("wide_integer", "value", static_cast<long long>(x),
