@@ -124,7 +124,7 @@ public:
     constexpr explicit multiply_with_carry(const word_array& words, UInt carry)
         : words_(words), carry_(carry) {
         if (carry > greatest_carry) {
-            detail::refuse("multiply_with_carry", "carry", static_cast<unsigned long long>(carry),
+            detail::refuse("multiply_with_carry", "carry", std::uint64_t{carry},
                            "must be below the sum of the multipliers");
         }
         if (all_equal(0, 0)) {
@@ -132,7 +132,7 @@ public:
                            "must not all be 0 where the carry is 0: that state never changes");
         }
         if (all_equal(max(), greatest_carry)) {
-            detail::refuse("multiply_with_carry", "words", static_cast<unsigned long long>(max()),
+            detail::refuse("multiply_with_carry", "words", std::uint64_t{max()},
                            "must not all be the greatest word where the carry is the greatest too: "
                            "that state never changes");
         }
