@@ -140,16 +140,24 @@ TYPED_TEST(jump_test, takes_distances_in_every_form) {
         leat::jump(e, std::numeric_limits<std::uint64_t>::max());
         leat::jump(e, static_cast<signed char>(1));
         EXPECT_TRUE(e == expected);
-        // 2^2047 does not fit a wide integer: 2^1000 steps, 2^1047 times over.
-        const leat::wide_integer p = E::period();
-        const leat::wide_integer far = leat::wide_integer::power_of_two(1000) % p *
-                                       (leat::wide_integer::power_of_two(1023) % p) % p *
-                                       leat::wide_integer{1 << 24};
-        expected = start;
-        leat::jump(expected, far);
-        e = start;
-        leat::jump(e, leat::pow2(2047));
-        EXPECT_TRUE(e == expected);
+        // 2^k where no wide integer holds it, by plain squares and doublings modulo the period.
+        const leat::wide_integer period = E::period();
+        for (const std::uint64_t k : {63ull, 1024ull, 2047ull, 18446744073709551615ull}) {
+            leat::wide_integer power{1};
+            for (int i = 63; i >= 0; --i) {
+                power = power * power % period;
+                if ((k >> i & 1u) != 0) {
+                    power = (power << 1) % period;
+                }
+            }
+            expected = start;
+            leat::jump(expected, power);
+            e = start;
+            leat::jump(e, leat::pow2(k));
+            EXPECT_TRUE(e == expected) << k;
+            leat::rewind(e, leat::pow2(k));
+            EXPECT_TRUE(e == start) << k;
+        }
 
         e = start;
         expect_refused([&e] { leat::jump(e, -1); });

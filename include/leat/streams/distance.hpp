@@ -7,10 +7,12 @@
 #define LEAT_STREAMS_DISTANCE_HPP
 
 #include "leat/core/errors.hpp"
-#include "leat/core/modular.hpp"
+#include "leat/core/montgomery.hpp" // powers of two modulo a period
 #include "leat/core/wide_integer.hpp"
 
+#include <array>
 #include <concepts>
+#include <cstddef>
 #include <cstdint>
 #include <string_view> // decimal text
 #include <type_traits>
@@ -40,35 +42,45 @@ concept jumpable = requires(Engine& e, const wide_integer& distance) {
 template <class Engine>
 inline constexpr wide_integer period_of = Engine::period();
 
-/// 2^k mod m, for m > 0.
-constexpr wide_integer power_of_two_modulo(std::uint64_t k, const wide_integer& m) {
-    const int width = m.bit_width();
-    if (k < wide_integer::bits) {
-        return wide_integer::power_of_two(static_cast<unsigned>(k)) % m;
-    }
-    if (m.fits_word()) {
-        const std::uint64_t word = m.word(0);
-        return power_mod<std::uint64_t>(2 % word, k, word);
-    }
-    if (m == wide_integer::power_of_two(static_cast<unsigned>(width - 1))) {
-        return {};
-    }
-    // Squares must fit: periods of engines do not come near this.
-    if (2 * width > wide_integer::bits) {
-        refuse("pow2", "exponent", k, "must be below 1024 where the period is above 2^512");
-    }
-    int below = 0; // the bits of k after the leading ones, which make a power that fits
-    while ((k >> below) >= wide_integer::bits) {
-        ++below;
-    }
-    wide_integer power = wide_integer::power_of_two(static_cast<unsigned>(k >> below)) % m;
-    while (below-- > 0) {
-        power = power * power % m;
-        if ((k >> below & 1u) != 0) {
-            power = (power << 1) % m;
+/// An engine's period as 2^twos times an odd number, which is given in 64-bit words too.
+template <class Engine>
+struct period_parts {
+    static constexpr wide_integer whole = Engine::period();
+    static constexpr unsigned twos = [] {
+        unsigned n = 0;
+        while (!whole.bit(static_cast<int>(n))) {
+            ++n;
         }
+        return n;
+    }();
+    static constexpr wide_integer odd = whole >> twos;
+    static constexpr std::size_t size = static_cast<std::size_t>(odd.bit_width() + 63) / 64;
+    static constexpr std::array<std::uint64_t, size> words = [] {
+        std::array<std::uint64_t, size> low{};
+        for (std::size_t i = 0; i < size; ++i) {
+            low[i] = odd.word(static_cast<int>(i));
+        }
+        return low;
+    }();
+};
+
+/// 2^k modulo an engine's period, for any k.
+template <class Engine>
+constexpr wide_integer power_of_two_modulo_period(std::uint64_t k) {
+    using parts = period_parts<Engine>;
+    if (k < static_cast<std::uint64_t>(parts::whole.bit_width()) - 1) {
+        return wide_integer::power_of_two(static_cast<unsigned>(k));
     }
-    return power;
+    if constexpr (parts::odd == wide_integer{1}) {
+        return {};
+    } else {
+        // 2^twos divides both 2^k and the period; the rest is a power modulo an odd number.
+        constexpr montgomery<parts::size> field{parts::words};
+        constexpr std::array<std::uint64_t, parts::size> two = field.to_form({2});
+        const std::array<std::uint64_t, parts::size> power =
+            field.from_form(field.power_form(two, wide_integer{k - parts::twos}));
+        return wide_integer{power} << parts::twos;
+    }
 }
 
 /// Appends a wide integer in decimal to a message.
@@ -117,11 +129,13 @@ public:
     [[nodiscard]] constexpr bool fits() const noexcept { return large_exponent_ == 0; }
     [[nodiscard]] constexpr const wide_integer& value() const noexcept { return value_; }
 
-    [[nodiscard]] constexpr wide_integer modulo(const wide_integer& m) const {
-        if (!fits()) {
-            return power_of_two_modulo(large_exponent_, m);
+    /// What is left of it modulo an engine's period.
+    template <class Engine>
+    [[nodiscard]] constexpr wide_integer modulo_period() const {
+        if (large_exponent_ != 0) {
+            return power_of_two_modulo_period<Engine>(large_exponent_);
         }
-        return value_ < m ? value_ : value_ % m;
+        return value_ < period_of<Engine> ? value_ : value_ % period_of<Engine>;
     }
 
     friend message& print(message& m, const step_count& n) {

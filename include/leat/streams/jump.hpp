@@ -44,7 +44,7 @@ constexpr Engine& jump(Engine& engine, const Distance& distance) {
     if constexpr (detail::jumpable<Engine>) {
         const wide_integer& period = detail::period_of<Engine>;
         const detail::step_count steps{"jump", "distance", distance};
-        wide_integer rest = steps.modulo(period);
+        wide_integer rest = steps.modulo_period<Engine>();
         if constexpr (detail::has_transient_states<Engine>) {
             // The period holds on the cycle only: walk there first. It is a few steps away.
             wide_integer walked;
@@ -68,7 +68,8 @@ constexpr Engine& rewind(Engine& engine, const Distance& distance) {
                   "leat::shuffled_by, rewind the base engine and wrap it then");
     if constexpr (detail::jumpable<Engine>) {
         const wide_integer& period = detail::period_of<Engine>;
-        const wide_integer back = detail::step_count{"rewind", "distance", distance}.modulo(period);
+        const detail::step_count steps{"rewind", "distance", distance};
+        const wide_integer back = steps.modulo_period<Engine>();
         if constexpr (detail::has_transient_states<Engine>) {
             if (!engine.is_recurrent()) {
                 detail::refuse("rewind", "the engine is in a transient state, which no step leads "
