@@ -28,7 +28,7 @@
 #include "leat/distributions/detail/into_range.hpp"
 #include "leat/distributions/detail/law.hpp"
 #include "leat/distributions/detail/ziggurat.hpp"
-#include "leat/uniform/open_interval.hpp"
+#include "leat/uniform/unit.hpp"
 
 #include <limits>
 
