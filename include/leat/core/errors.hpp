@@ -114,7 +114,8 @@ public:
     message& value(float x) noexcept { return value(static_cast<double>(x)); }
     message& hex(std::uint64_t x) noexcept {
         char digits[32];
-        std::snprintf(digits, sizeof digits, "%016llx", static_cast<unsigned long long>(x));
+        const unsigned long long word = x; // what %llx prints, whatever 64 bits are called here
+        std::snprintf(digits, sizeof digits, "%016llx", word);
         return text(digits);
     }
     [[nodiscard]] const char* c_str() const noexcept { return buffer_; }
