@@ -11,8 +11,9 @@
 // One draw consumes one `word64` (float: one `word32`); nothing is rejected.
 // Refused: a or b not finite; b not above a; b - a below 2^-960 (float: 2^-100), where subnormal
 // numbers would begin to matter; open ends with no number between them.
-// Cost: about 1 ns over `unit` for a = 0, 3 ns else, 20 ns where the ends are more than 2^70 apart
-// in magnitude. A call with parameters (g, p) prepares them anew: 10 ns more.
+// Cost, measured over `unit`: under 1 ns for a = 0, 2 ns for most intervals, 30 to 40 ns where the
+// exact sum passes 127 bits, as for {1e-6, 1e6}, and 17 ns with closed ends. A call (g, p) prepares
+// the interval anew: some 12 ns.
 // Not for integers: rounding or truncating a uniform real is biased, see uniform_integer.
 
 #ifndef LEAT_UNIFORM_OPEN_INTERVAL_HPP
@@ -157,9 +158,9 @@ private:
         if (!(p.a < p.b)) {
             return fault::order;
         }
-        // Only small ends can be too close, so the difference is exact where it matters.
+        // The width as rounded to Real decides; one that may overflow is not computed.
         constexpr Real least = std::same_as<Real, double> ? Real(0x1p-960) : Real(0x1p-100f);
-        if (p.a > -1 && p.b < 1 && p.b - p.a < least) {
+        if (p.a > -1 && p.b < 1 && detail::held(p.b - p.a) < least) {
             return fault::width;
         }
         if (Ends == ends::open && detail::next_up(p.a) == p.b) {
@@ -180,7 +181,7 @@ private:
         case fault::order:
             detail::refuse("uniform", "b", p.b, "must be above a");
         case fault::width:
-            detail::refuse("uniform", "b - a", p.b - p.a,
+            detail::refuse("uniform", "b - a", detail::held(p.b - p.a),
                            "must be at least 2^-960 (2^-100 for float)");
         case fault::room:
             detail::refuse("uniform", "b", p.b,
