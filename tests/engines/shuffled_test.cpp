@@ -62,6 +62,21 @@ TEST(shuffled, agrees_with_the_standard_library) {
     }
 }
 
+// An engine of <random> as the base: compared, written and read as any other.
+TEST(shuffled, wraps_engines_of_the_standard_library) {
+    leat::shuffled<std::mt19937, 64> e{7};
+    e.discard(1000);
+    std::stringstream text;
+    text << e;
+    leat::shuffled<std::mt19937, 64> back;
+    EXPECT_FALSE(back == e);
+    text >> back;
+    EXPECT_FALSE(text.fail());
+    EXPECT_TRUE(back == e);
+    EXPECT_TRUE(back.state() == e.state());
+    EXPECT_EQ(back(), e());
+}
+
 // Source: the entry shuffle.index-definitions of engines.json: ISO's index and that of Knuth's
 // Algorithm B differ for 127 values. The range is cut into 256 cells: only their edges can differ.
 TEST(shuffled, uses_the_index_of_iso) {

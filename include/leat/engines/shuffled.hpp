@@ -178,7 +178,9 @@ public:
         result_type last;
         std::array<result_type, K> table;
 
-        friend constexpr bool operator==(const state_type&, const state_type&) = default;
+        friend constexpr bool operator==(const state_type& a, const state_type& b) {
+            return a.base == b.base && a.last == b.last && a.table == b.table;
+        }
     };
 
     static constexpr result_type min() noexcept { return Engine::min(); }
@@ -231,7 +233,10 @@ public:
     [[nodiscard]] constexpr const Engine& base() const noexcept { return base_; }
     [[nodiscard]] constexpr state_type state() const { return {base_, last_, table_.words}; }
 
-    friend constexpr bool operator==(const shuffled&, const shuffled&) = default;
+    // Spelled out: a defaulted constexpr == does not compile over an engine of <random>.
+    friend constexpr bool operator==(const shuffled& a, const shuffled& b) {
+        return a.base_ == b.base_ && a.last_ == b.last_ && a.table_ == b.table_;
+    }
 
     /// The base engine, the table, the last value.
     template <class Char, class Traits>
@@ -279,7 +284,9 @@ public:
         Selector selector;
         std::array<result_type, K> table;
 
-        friend constexpr bool operator==(const state_type&, const state_type&) = default;
+        friend constexpr bool operator==(const state_type& a, const state_type& b) {
+            return a.base == b.base && a.selector == b.selector && a.table == b.table;
+        }
     };
 
     static constexpr result_type min() noexcept { return Engine::min(); }
@@ -341,7 +348,9 @@ public:
     [[nodiscard]] constexpr const Selector& selector() const noexcept { return selector_; }
     [[nodiscard]] constexpr state_type state() const { return {base_, selector_, table_.words}; }
 
-    friend constexpr bool operator==(const shuffled_by&, const shuffled_by&) = default;
+    friend constexpr bool operator==(const shuffled_by& a, const shuffled_by& b) {
+        return a.base_ == b.base_ && a.selector_ == b.selector_ && a.table_ == b.table_;
+    }
 
     /// The base engine, the selector, the table.
     template <class Char, class Traits>

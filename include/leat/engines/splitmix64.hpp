@@ -70,9 +70,7 @@ public:
         return mix(state_);
     }
 
-    constexpr void discard(unsigned long long n) noexcept {
-        state_ += gamma * static_cast<std::uint64_t>(n);
-    }
+    constexpr void discard(unsigned long long n) noexcept { state_ += gamma * n; }
     /// Moves on by any distance, exactly.
     constexpr void advance(const wide_integer& distance) noexcept { discard(distance.word(0)); }
 

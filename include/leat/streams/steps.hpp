@@ -85,8 +85,7 @@ constexpr std::optional<wide_integer> steps_between(const philox4<UInt>& a,
     const auto draws_before = [](const philox4<UInt>& e) {
         wide_integer counter;
         for (std::size_t i = 4; i-- > 0;) {
-            counter =
-                (counter << static_cast<unsigned>(8 * sizeof(UInt))) + wide_integer{e.counter()[i]};
+            counter = (counter << (sizeof(UInt) == 4 ? 32u : 64u)) + wide_integer{e.counter()[i]};
         }
         return (counter << 2) + wide_integer{e.place()};
     };
