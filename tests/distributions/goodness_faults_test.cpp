@@ -3,7 +3,7 @@
 
 #include "distributions/law_report.hpp"
 #include "support/alarm_budget.hpp"
-#include "support/published.hpp"
+#include "support/reference.hpp"
 #include "support/seeds.hpp"
 
 #include "leat/distributions/gamma.hpp"
@@ -26,7 +26,7 @@ constexpr int many = 1000000;
 
 std::vector<outcome> report_as_standard_normal(std::vector<double> x) {
     const boost::math::normal_distribution<double, in_double> reference(0, 1);
-    const auto& entry = published("distributions", "distributions.normal.0.1");
+    const auto& entry = reference_entry("distributions.normal.0.1");
     auto report = law_report("normal", x, reference);
     return report + quantile_report("normal", x, entry);
 }
@@ -38,7 +38,7 @@ public:
     enum class fault { none, index_from_magnitude, no_tail };
 
     explicit textbook_ziggurat(fault planted) : planted_(planted) {
-        const auto& entry = published("distributions", "distributions.ziggurat.normal.256");
+        const auto& entry = reference_entry("distributions.ziggurat.normal.256");
         r_ = std::stod(entry["expected"]["r"].get<std::string>());
         const double v = std::stod(entry["expected"]["v"].get<std::string>());
         edge_[0] = v / density(r_);

@@ -2,7 +2,7 @@
 
 #include "distributions/law_report.hpp"
 #include "support/alarm_budget.hpp"
-#include "support/published.hpp"
+#include "support/reference.hpp"
 #include "support/seeds.hpp"
 
 #include "leat/distributions/exponential.hpp"
@@ -38,8 +38,9 @@ std::vector<double> check_law(const std::string& name, const Law& law, const Ref
 /// The same where tests/reference/distributions.json has the law: `id` after "distributions.".
 template <class Law, class Reference>
 void check_published_law(const std::string& id, const Law& law, const Reference& reference) {
-    const auto x = check_law(id, law, reference);
-    check(quantile_report(id, x, published("distributions", "distributions." + id)));
+    const auto& entry = reference_entry("distributions." + id);
+    LEAT_TEST_REFERENCE(entry);
+    check(quantile_report(id, check_law(id, law, reference), entry));
 }
 
 TEST(LawGoodness, Normal) {

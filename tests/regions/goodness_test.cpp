@@ -50,7 +50,7 @@ TEST(DiskGoodness, UnitDisk) {
 // The radius and centre of regions.disk.2.5 (tests/reference/regions.json), moved off the origin.
 TEST(DiskGoodness, DiskElsewhere) {
     auto g = source_of_this_test().stream();
-    const auto& facts = published("regions", "regions.disk.2.5")["expected"]["facts"];
+    const auto& facts = reference_entry("regions.disk.2.5")["expected"]["facts"];
     auto points = draw_points(leat::disk{{-40, 3}, 2.5}, many, g);
     double squares = 0;
     for (auto& p : points) {
@@ -91,7 +91,7 @@ TEST(EllipseGoodness, TurnedByRejection) {
 template <class Ellipse>
 void check_published_ellipse() {
     auto g = source_of_this_test().stream();
-    const auto& entry = published("regions", "regions.ellipse.5.0.5");
+    const auto& entry = reference_entry("regions.ellipse.5.0.5");
     const auto& facts = entry["expected"]["facts"];
     const double a = entry["parameters"]["a"];
     const double b = entry["parameters"]["b"];

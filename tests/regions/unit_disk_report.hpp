@@ -11,7 +11,7 @@
 #ifndef LEAT_TESTS_REGIONS_UNIT_DISK_REPORT_HPP
 #define LEAT_TESTS_REGIONS_UNIT_DISK_REPORT_HPP
 
-#include "support/published.hpp"
+#include "support/reference.hpp"
 #include "support/statistics.hpp"
 
 #include <array>
@@ -39,7 +39,7 @@ inline double disk_moment(int a, int b) {
 inline double integer_power(double x, int n) { return n == 0 ? 1 : x * integer_power(x, n - 1); }
 
 inline std::vector<outcome> unit_disk_report(const std::vector<plane_point>& points) {
-    const auto& facts = published("regions", "regions.disk.unit")["expected"]["facts"];
+    const auto& facts = reference_entry("regions.disk.unit")["expected"]["facts"];
     const auto n = static_cast<double>(points.size());
     std::vector<outcome> report;
 
@@ -78,8 +78,8 @@ inline std::vector<outcome> unit_disk_report(const std::vector<plane_point>& poi
     report.push_back(
         mean_test("mean radius", radii, n, {mean_radius, mean_square - mean_radius * mean_radius}));
     // 32 R / (9 pi) from a boundary point; the mean square is R^2 + E r^2 (parallel axes)
-    const double edge = published(
-        "regions", "regions.disk.2.5")["expected"]["facts"]["mean_distance_from_a_boundary_point"];
+    const double edge = reference_entry(
+        "regions.disk.2.5")["expected"]["facts"]["mean_distance_from_a_boundary_point"];
     report.push_back(mean_test("mean distance from a boundary point", from_the_edge, n,
                                {edge / 2.5, 1 + mean_square - edge * edge / 6.25}));
     report.push_back(count_test("share within half the radius", within_half, points.size(),

@@ -38,6 +38,7 @@ struct declared_checks {
 
 inline constexpr declared_checks alarm_budget[] = {
     {"Statistics.KolmogorovSmirnovFindsNothingInUniforms", 1},
+    {"Disk.IsUniformOnACoarseGrid", 1},
     {"DiskGoodness.UnitDisk", 20},
     {"DiskGoodness.DiskElsewhere", 21},
     {"DiskGoodness.FloatDisk", 20},
@@ -56,6 +57,11 @@ inline constexpr declared_checks alarm_budget[] = {
     {"LawGoodness.GammaLogarithm", 4},
     {"PlantedFaults.TextbookZigguratPasses", 18},
     {"PlantedFaults.GammaWithTheRightBoostPasses", 3},
+    {"StreamStatistics.FirstWordsOfSeedsAreDistinct", 2}, // a chance of 1.2e-10
+    {"StreamStatistics.FirstWordsOfSeedsAreBalanced", 65},
+    {"StreamStatistics.FirstWordsOfNeighbouringSeedsAreUncorrelated", 80},
+    {"StreamStatistics.NeighbouringStreamsAreUncorrelated", 4},
+    {"StreamStatistics.SiblingsShareNoWord", 271}, // a chance of 2.71e-8
     {"AlarmBudget.APValueBelowTheLevelFails", 1},
 };
 

@@ -2,7 +2,7 @@
 // must find, and on the accounting of false alarms.
 
 #include "support/alarm_budget.hpp"
-#include "support/published.hpp"
+#include "support/reference.hpp"
 #include "support/seeds.hpp"
 #include "support/statistics.hpp"
 
@@ -21,12 +21,12 @@ using namespace leat_test;
 TEST(Statistics, KolmogorovSeriesGivesThePublishedTable) {
     const double n = 1e16; // where the correction for finite n vanishes
     for (const char* lambda : {"0.5", "0.8", "1.2", "1.3581", "1.6276"}) {
-        const auto& entry = published("tests", std::string("tests.kolmogorov.") + lambda);
+        const auto& entry = reference_entry(std::string("tests.kolmogorov.") + lambda);
         const double q = entry["expected"]["Q"];
         const double t = entry["parameters"]["lam"];
         EXPECT_NEAR(kolmogorov_p(t / std::sqrt(n), n) / q, 1, 1e-7) << lambda;
     }
-    const auto& points = published("tests", "tests.kolmogorov.critical");
+    const auto& points = reference_entry("tests.kolmogorov.critical");
     for (std::size_t i = 0; i < points["parameters"]["alpha"].size(); ++i) {
         const double alpha = points["parameters"]["alpha"][i];
         const double t = points["expected"]["quantiles"][i];
