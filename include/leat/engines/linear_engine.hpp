@@ -68,15 +68,18 @@ template <class Step>
 inline constexpr auto characteristic = derive_characteristic<Step>();
 
 /// p(T) applied to a state: the sum of T^i state over the non-zero coefficients i of p.
-template <class Step, class State, class Residue>
-constexpr State apply_polynomial(const Residue& p, State state) noexcept {
-    using word = typename Residue::value_type;
-    State total{};
-    for (const word coefficients : p) {
-        for (int i = 0; i < 8 * static_cast<int>(sizeof(word)); ++i) {
+template <class Step, class Word, std::size_t Size, std::size_t Words>
+constexpr std::array<Word, Words> apply_polynomial(const std::array<Word, Size>& p,
+                                                   std::array<Word, Words> state) noexcept {
+    std::array<Word, Words> total{};
+    // Pointers, since calls of operator[] would use up the compilers' limit of constant evaluation.
+    Word* const sum = total.data();
+    const Word* const term = state.data();
+    for (const Word coefficients : p) {
+        for (int i = 0; i < 8 * static_cast<int>(sizeof(Word)); ++i) {
             if ((coefficients >> i & 1u) != 0) {
-                for (std::size_t j = 0; j < state.size(); ++j) {
-                    total[j] ^= state[j];
+                for (std::size_t j = 0; j < Words; ++j) {
+                    sum[j] ^= term[j];
                 }
             }
             Step::step(state);

@@ -41,13 +41,14 @@ struct xoshiro256_step {
     static constexpr word smallest = 0;
 
     static constexpr void step(std::array<word, words>& s) noexcept {
-        const word t = s[1] << 17;
-        s[2] ^= s[0];
-        s[3] ^= s[1];
-        s[1] ^= s[2];
-        s[0] ^= s[3];
-        s[2] ^= t;
-        s[3] = std::rotl(s[3], 45);
+        auto& [s0, s1, s2, s3] = s; // fewer calls than s[i], which count in constant evaluation
+        const word t = s1 << 17;
+        s2 ^= s0;
+        s3 ^= s1;
+        s1 ^= s2;
+        s0 ^= s3;
+        s2 ^= t;
+        s3 = std::rotl(s3, 45);
     }
 };
 
