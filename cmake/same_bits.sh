@@ -73,7 +73,7 @@ build() { # FOLDER COMPILER FLAGS...: one process a source file, so that all cor
         shift 2
         "$@" -c "$source" -o "$folder/$(basename "$source" .cpp).o"' \
         sh '{}' "$folder" "$@" -std=c++20 "-I$root/include" "-I$root/tests" &&
-        "$@" "$folder"/*.o -o "$folder/digest"
+        "$@" "$folder"/*.o -o "$folder/digest.exe"
 }
 
 same() { # TARGET RUNNER COMPILER FLAGS...: a build whose digests must be the golden ones
@@ -87,7 +87,7 @@ same() { # TARGET RUNNER COMPILER FLAGS...: a build whose digests must be the go
     if ! build "$folder" "$@" >"$folder.log" 2>&1; then
         result=BROKEN
         head -n 20 "$folder.log" >"$folder.why"
-    elif ! $runner "$folder/digest" >"$folder.out" 2>"$folder.why"; then
+    elif ! $runner "$folder/digest.exe" >"$folder.out" 2>"$folder.why"; then
         result=CRASHED
     elif tr -d '\r' <"$folder.out" | diff "$golden" - >"$folder.diff"; then
         result=same
@@ -95,8 +95,8 @@ same() { # TARGET RUNNER COMPILER FLAGS...: a build whose digests must be the go
         result=DIFFERENT
         sed -n 's/^> //p' "$folder.diff" >"$folder.why"
     fi
-    if [ -e "$folder/digest" ]; then
-        machine=$($runner "$folder/digest" --machine 2>/dev/null | tr -d '\r') || machine="? ?"
+    if [ -e "$folder/digest.exe" ]; then
+        machine=$($runner "$folder/digest.exe" --machine 2>/dev/null | tr -d '\r') || machine="? ?"
     fi
     if [ $result != same ]; then
         failed="$failed $rows"

@@ -1,7 +1,7 @@
 // The digest of what leat computes: a line for each thing, the same on every machine (promise P1)
 // and in every version of one major number (promise P7).
 //
-// To join: a line in engines.cpp, streams.cpp, uniform.cpp, laws.cpp or regions.cpp.
+// To join: a line in engines.cpp, streams.cpp, uniform.cpp, maths.cpp, laws.cpp or regions.cpp.
 // The digest is FNV-1a, 64 bits (Fowler, Noll and Vo, 1991; constants from memory), over the bytes
 // of the values, the least significant first.
 
@@ -77,6 +77,7 @@ void draws(const char* name, const Draw& draw, int count = 50000, Engine g = Eng
 void engines();
 void streams();
 void uniform();
+void maths();
 void laws();
 void regions();
 

@@ -1,12 +1,7 @@
 // Digests of the engines: seeds of every form, draws, discards, jumps and their own unit().
 
+#include "leat/engines.hpp"
 #include "digest/digest.hpp"
-#include "leat/engines/counter.hpp"
-#include "leat/engines/lehmer.hpp"
-#include "leat/engines/multiply_with_carry.hpp"
-#include "leat/engines/xoroshiro.hpp"
-#include "leat/engines/xorshift.hpp"
-#include "leat/engines/xoshiro.hpp"
 
 #include <string>
 
@@ -63,6 +58,7 @@ void engines() {
     engine<leat::minimal_standard>("engine.minimal_standard");
     engine<leat::minimal_standard_48271>("engine.minimal_standard_48271");
     engine<leat::minimal_standard_69621>("engine.minimal_standard_69621");
+    engine<leat::lehmer128>("engine.lehmer128");
     engine<leat::mwc_lag4_32>("engine.mwc_lag4_32");
     engine<leat::mwc_lag1_32>("engine.mwc_lag1_32");
     engine<leat::mwc_lag1_64>("engine.mwc_lag1_64");
@@ -75,9 +71,15 @@ void engines() {
     engine<leat::xoshiro256_plus>("engine.xoshiro256_plus");
     engine<leat::xoshiro256_plus_plus>("engine.xoshiro256_plus_plus");
     engine<leat::xoshiro256_star_star>("engine.xoshiro256_star_star");
+    engine<leat::xoshiro256_braid>("engine.xoshiro256_braid");
+    engine<leat::mrg32k3a>("engine.mrg32k3a");
     engine<leat::splitmix64>("engine.splitmix64");
     engine<leat::philox4x32>("engine.philox4x32");
     engine<leat::philox4x64>("engine.philox4x64");
+    engine<leat::shuffled<leat::minimal_standard, 256>>("engine.shuffled.minimal_standard");
+    engine<leat::shuffled<leat::xoshiro256_plus, 64>>("engine.shuffled.xoshiro256_plus");
+    engine<leat::shuffled_by<leat::minimal_standard, leat::minimal_standard_48271, 128>>(
+        "engine.shuffled_by.minimal_standard");
 }
 
 } // namespace digests
