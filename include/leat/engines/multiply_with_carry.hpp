@@ -170,14 +170,14 @@ public:
     }
 
     constexpr result_type operator()() noexcept {
+        // What the last step made comes last into the sum: it is what the processor waits for.
         detail::column_sum<UInt> sum;
-        sum.add_word(carry_);
-        for (std::size_t i = 0; i < lag; ++i) {
-            sum.add_product(multipliers[i], words_[i]);
-        }
         for (std::size_t i = 0; i + 1 < lag; ++i) {
+            sum.add_product(multipliers[i], words_[i]);
             words_[i] = words_[i + 1];
         }
+        sum.add_word(carry_);
+        sum.add_product(multipliers[lag - 1], words_[lag - 1]);
         words_[lag - 1] = sum.take_word();
         carry_ = sum.take_word();
         return words_[lag - 1];
