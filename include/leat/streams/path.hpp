@@ -34,6 +34,7 @@
 #include "leat/core/siphash.hpp"
 
 #include <concepts>
+#include <cstddef> // nullptr_t
 #include <cstdint>
 #include <string_view> // text parts
 #include <type_traits>
@@ -68,6 +69,8 @@ constexpr path_part as_path_part(const T& part) {
     static_assert(!std::floating_point<T>,
                   "leat: a floating-point number is no path part; write an integer, such as a "
                   "step number, or a text");
+    static_assert(!std::same_as<T, std::nullptr_t>,
+                  "leat: nullptr is no path part; write an integer or a text");
     static_assert(path_integer<T> || std::convertible_to<const T&, std::string_view> ||
                       std::floating_point<T> || character<T> || std::same_as<T, bool>,
                   "leat: a path part is an integer of up to 64 bits or a text; cast an "
