@@ -5,7 +5,7 @@ include(CMakePackageConfigHelpers)
 
 set(package_dir "${CMAKE_INSTALL_DATADIR}/cmake/leat")
 
-install(DIRECTORY include/leat DESTINATION "${CMAKE_INSTALL_INCLUDEDIR}" FILES_MATCHING PATTERN "*.hpp")
+install(DIRECTORY include/leat DESTINATION "${CMAKE_INSTALL_INCLUDEDIR}")
 install(FILES LICENSE DESTINATION "${CMAKE_INSTALL_DATADIR}/licenses/leat")
 
 install(TARGETS leat EXPORT leat-targets INCLUDES DESTINATION "${CMAKE_INSTALL_INCLUDEDIR}")
