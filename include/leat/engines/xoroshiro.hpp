@@ -10,8 +10,8 @@
 // Good for: programs that keep many engines and count bytes; 2^32 blocks of 2^96 words.
 // Known weaknesses: none in the words themselves; the state under them is linear over GF(2), and
 // neighbouring states stay close for a few words.
-// When not: for very many independently seeded engines (128 bits of state make an overlap a
-// million times likelier than one might think: see leat::overlap_bound); for keys or tokens.
+// When not: for very many engines seeded at random: n of them, L words each, overlap with a
+// probability of about n^2 L / 2^128 (see leat::overlap_bound); for keys or tokens.
 
 #ifndef LEAT_ENGINES_XOROSHIRO_HPP
 #define LEAT_ENGINES_XOROSHIRO_HPP
