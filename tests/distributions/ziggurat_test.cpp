@@ -144,10 +144,9 @@ TEST(Ziggurat, TailsGoOnWithExponentials) {
 template <class Draw>
 double words_per_draw(Draw draw) {
     struct counting {
-        using result_type = std::uint64_t;
-        static constexpr result_type min() { return 0; }
-        static constexpr result_type max() { return ~result_type{0}; }
-        result_type operator()() {
+        static constexpr std::uint64_t min() { return 0; }
+        static constexpr std::uint64_t max() { return ~std::uint64_t{0}; }
+        std::uint64_t operator()() {
             ++drawn;
             return g();
         }

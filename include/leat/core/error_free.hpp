@@ -11,6 +11,9 @@
 
 #include "leat/core/barrier.hpp"
 
+#include <bit>
+#include <cstdint>
+
 namespace leat::detail {
 
 /// A real as the exact sum of two doubles, the second small beside the first.
@@ -18,6 +21,11 @@ struct two_part {
     double high;
     double low;
 };
+
+/// |x|, without the branch on a sign that comparing with two bounds may become.
+constexpr double magnitude(double x) noexcept {
+    return std::bit_cast<double>(std::bit_cast<std::uint64_t>(x) & ~(std::uint64_t{1} << 63));
+}
 
 /// a + b, exactly; no order of size asked.
 constexpr two_part two_sum(double a, double b) noexcept {

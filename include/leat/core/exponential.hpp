@@ -13,6 +13,7 @@
 #define LEAT_CORE_EXPONENTIAL_HPP
 
 #include "leat/core/barrier.hpp"
+#include "leat/core/error_free.hpp"        // magnitude
 #include "leat/core/exponential_table.hpp" // by tests/reference/make_math_tables.py
 #include "leat/core/scaled.hpp"
 
@@ -68,7 +69,7 @@ constexpr double natural_exp(double x) noexcept { return exp_scaled(x).value(); 
 /// e^x - 1, right also where x is small. Saturates above; 0 for x = 0.
 constexpr double exp_minus_one(double x) noexcept {
     using real = strict<double>;
-    if (x > -0x1p-54 && x < 0x1p-54) {
+    if (magnitude(x) < 0x1p-54) {
         return x;
     }
     if (x < -40) {

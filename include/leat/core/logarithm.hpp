@@ -70,7 +70,7 @@ constexpr double natural_log(double x) noexcept { return log_parts(x).high; }
 /// ln(1 + x), right also where x is small; x > -1 and finite.
 constexpr double log_one_plus(double x) noexcept {
     using real = strict<double>;
-    if (x > -0x1p-54 && x < 0x1p-54) {
+    if (magnitude(x) < 0x1p-54) {
         return x;
     }
     const two_part sum = two_sum(1.0, x);

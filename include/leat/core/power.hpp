@@ -8,7 +8,7 @@
 #define LEAT_CORE_POWER_HPP
 
 #include "leat/core/barrier.hpp"
-#include "leat/core/error_free.hpp" // two_part
+#include "leat/core/error_free.hpp" // two_part, magnitude
 #include "leat/core/exponential.hpp"
 #include "leat/core/logarithm.hpp"
 
@@ -22,10 +22,10 @@ constexpr scaled power_scaled(double x, double y) noexcept {
     const double log_high = shortened(log.high, 27);
     const double y_high = shortened(y, 27);
     const double high = held(y_high * log_high);
-    if (!(high < 2000 && high > -2000)) {
+    if (!(magnitude(high) < 2000)) {
         return exp_scaled(high);
     }
-    if (high < 0x1p-60 && high > -0x1p-60) { // nothing below may become subnormal
+    if (magnitude(high) < 0x1p-60) { // nothing below may become subnormal
         return {1.0, 0};
     }
     const real log_low = (real(log.high) - log_high) + log.low;

@@ -20,6 +20,7 @@
 
 #include "leat/core/barrier.hpp"
 #include "leat/core/concepts.hpp"
+#include "leat/core/error_free.hpp" // magnitude
 #include "leat/core/errors.hpp"
 #include "leat/core/exponential.hpp"
 #include "leat/core/logarithm.hpp"
@@ -65,7 +66,7 @@ namespace detail {
 constexpr double log_beyond_cube(double t) noexcept {
     using real = strict<double>;
     const real x = t;
-    if (t > -0x1p-4 && t < 0x1p-4) {
+    if (magnitude(t) < 0x1p-4) {
         real sum = 0.0;
         for (int n = 16; n >= 4; --n) { // the series of the logarithm from t^4 on
             sum = real(1.0) / static_cast<double>(n) - x * sum;

@@ -7,6 +7,7 @@
 #define LEAT_DISTRIBUTIONS_DETAIL_INTO_RANGE_HPP
 
 #include "leat/core/concepts.hpp"
+#include "leat/core/error_free.hpp" // magnitude
 
 #include <bit>
 #include <cstdint>
@@ -42,8 +43,7 @@ constexpr Real into_positive(double x) noexcept {
 /// x of either sign, among the normal numbers. No branch on the sign: it is a coin toss.
 template <portable_real Real>
 constexpr Real into_signed(double x) noexcept {
-    const std::uint64_t bits = std::bit_cast<std::uint64_t>(x);
-    if (well_inside<Real>(std::bit_cast<double>(bits & ~(std::uint64_t{1} << 63)))) [[likely]] {
+    if (well_inside<Real>(magnitude(x))) [[likely]] {
         return static_cast<Real>(x);
     }
     return end_of_range<Real>(x);
