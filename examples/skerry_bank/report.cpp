@@ -1,5 +1,6 @@
 #include "report.hpp"
 
+#include <algorithm>
 #include <cmath>
 #include <type_traits> // is_same_v
 
@@ -30,10 +31,22 @@ std::string plus_minus(const interval& x, double unit, int digits) {
     return fixed(x.mean / unit, digits) + " +/- " + fixed(x.half_width / unit, digits);
 }
 
-/// A line of the table: a label, then a column for each design.
-std::string line(std::string_view label, std::string_view first, std::string_view second) {
-    return "  " + left(label, 24) + right(first, 24) + right(second, 24) + "\n";
-}
+/// Writes the lines of the table: a label, then a column for each design, wide enough for its name.
+class line_writer {
+public:
+    explicit line_writer(const input& in) {
+        for (const design_input& design : in.designs) {
+            width_ = std::max(width_, design.name.size() + 3);
+        }
+    }
+    std::string operator()(std::string_view label, std::string_view first,
+                           std::string_view second) const {
+        return "  " + left(label, 24) + right(first, width_) + right(second, width_) + "\n";
+    }
+
+private:
+    std::size_t width_ = 24;
+};
 
 constexpr double percent = 0.01;       // of a share
 constexpr double gigawatt_hour = 1000; // megawatt-hours
@@ -47,6 +60,7 @@ std::string table(const input& in, const study_summary& summary) {
         return "  " + left(label, 38) + right(plus_minus(x, percent, 3), 18) + "   [" +
                fixed(x.low() / percent, 3) + ", " + fixed(x.high() / percent, 3) + "]\n";
     };
+    const line_writer line(in);
     std::string text = heading(in);
     text += std::to_string(in.replications) + " replications; means with 95 % intervals\n\n";
     text += line("", in.designs[0].name, in.designs[1].name);
@@ -75,6 +89,7 @@ std::string table(const input& in, const study_summary& summary) {
 std::string row_table(const input& in, const replication_row& row) {
     const outcome& a = row.designs[0];
     const outcome& b = row.designs[1];
+    const line_writer line(in);
     std::string text = heading(in);
     text += "Replication " + std::to_string(row.replication) + " of 0 to " +
             std::to_string(in.replications - 1) + ", run alone\n\n";
