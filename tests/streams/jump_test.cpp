@@ -263,6 +263,44 @@ TEST(jump, reaches_the_reference_draws_of_philox) {
     expect_philox_jumps<leat::philox4x64>("jumps.philox4x64.");
 }
 
+// From a transient state the period does not hold yet: a jump walks to the cycle first, and nothing
+// leads back. Every 64th transient state of an 8-bit analogue; source: the steps themselves.
+TEST(jump, walks_out_of_transient_states) {
+    using small = leat::multiply_with_carry<std::uint8_t, 7, 5>;
+    const auto period = static_cast<std::uint64_t>(small::period());
+    int transient = 0;
+    for (unsigned state = 1; state < 65536 * 12 - 1; ++state) {
+        const small start{{static_cast<std::uint8_t>(state), static_cast<std::uint8_t>(state >> 8)},
+                          static_cast<std::uint8_t>(state >> 16)};
+        if (start.is_recurrent()) {
+            continue;
+        }
+        if (++transient % 64 != 0) {
+            continue;
+        }
+        small drawn = start;
+        for (int n = 0; n < 6; ++n) {
+            small jumped = start;
+            leat::jump(jumped, n);
+            ASSERT_TRUE(jumped == drawn) << state << ' ' << n;
+            drawn();
+        }
+        // Once on the cycle, the period changes nothing: neither given, nor within a power of two.
+        small once = start;
+        once.discard(5);
+        small around = start;
+        leat::jump(around, period + 5);
+        ASSERT_TRUE(around == once) << state;
+        small far = start;
+        leat::jump(leat::jump(far, leat::pow2(1100)), 5);
+        leat::jump(once, leat::pow2(1100));
+        ASSERT_TRUE(far == once) << state;
+        ASSERT_THROW(leat::rewind(far = start, 1), leat::invalid_parameter);
+        ASSERT_TRUE(far == start);
+    }
+    EXPECT_GT(transient, 64000);
+}
+
 // Lehmer engines and counters jump in constant evaluation.
 constexpr bool jumps_at_compile_time() {
     leat::minimal_standard a{1};

@@ -4,7 +4,9 @@
 // Output    x after the step: 1 to m - 1, never 0, and with a prime m and a primitive root a each
 //           of them once in a period. The range is no power of two: take whole words, integers and
 //           reals from it through leat's uniform/, which stays exact, or x / m through `unit()`.
-// Period    the order of a modulo m, found at compile time; 2^31 - 2 for the three aliases.
+// Period    the order of a modulo m, found at compile time where period() or a jump is used; it is
+//           2^31 - 2 for the three aliases. It needs the prime factors of m and of m - 1: any
+//           32-bit modulus will do; two prime factors above some 2^24 pass the compilers' limits.
 // Jumps     a^n by binary powers: well below a microsecond for 32-bit moduli.
 // Seeding   lehmer{x} takes the state itself. A seed sequence follows ISO C++
 //           [rand.eng.lcong]: ceil(log2 m / 32) + 3 words, the first three left out; 0 becomes 1.

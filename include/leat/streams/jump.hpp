@@ -23,6 +23,8 @@
 #include "leat/core/wide_integer.hpp"
 #include "leat/streams/distance.hpp"
 
+#include <concepts>
+
 namespace leat {
 
 namespace detail {

@@ -1,16 +1,14 @@
 // block and leapfrog: pieces of one engine's sequence that cannot meet, each with an end.
 //
-//     auto mine = leat::block(engine, worker, leat::pow2(40));   // the worker-th 2^40 draws
-//     auto ours = leat::leapfrog(engine, worker, workers);       // draws worker, worker + workers,
-//     ...
+//     auto mine = leat::block(engine, i, leat::pow2(40));   // the i-th 2^40 draws
+//     auto mine = leat::leapfrog(engine, i, n);             // draws i, i + n, i + 2n, ...
 //
 // Both leave `engine` as it is and count from its next draw. They return a limited<...>, which is
 // drawn from like an engine and throws stream_exhausted where its piece ends.
 //
 // block(engine, i, length): draws i * length to (i + 1) * length - 1. Any engine that can jump. The
 // length and i are integers, wide integers, pow2(k) or decimal text. A block that does not lie
-// within the period is refused, so that all blocks of one length are disjoint, whatever their
-// number.
+// within the period is refused, so that all blocks of one length are disjoint.
 //
 // leapfrog(engine, i, n): draws i, i + n, i + 2n, ... at O(1) each, for engines with a member
 // leap(n) (Lehmer engines, counters); others do not compile. It ends with the last such draw below
