@@ -21,6 +21,7 @@
 #include "leat/core/scaled.hpp"
 #include "leat/core/sine_cosine.hpp"
 #include "leat/core/siphash.hpp"
+#include "leat/core/sizes.hpp"
 #include "leat/core/square_root.hpp"
 #include "leat/core/text.hpp"
 #include "leat/core/wide_integer.hpp"

@@ -5,6 +5,7 @@
 #ifndef LEAT_LEAT_HPP
 #define LEAT_LEAT_HPP
 
+#include "leat/bulk.hpp"
 #include "leat/core.hpp"
 #include "leat/distributions.hpp"
 #include "leat/engines.hpp"

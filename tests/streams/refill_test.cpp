@@ -11,9 +11,11 @@ namespace {
 
 using leat::detail::refill_portably;
 using leat::detail::stream_place;
-using words = std::array<std::uint64_t, leat::detail::stream_buffer_words>;
+constexpr std::size_t buffers = 3;
+using words = std::array<std::uint64_t, buffers * leat::detail::stream_buffer_words>;
 
-using kernel = void (*)(std::uint64_t, std::uint64_t, std::uint64_t, std::uint64_t*) noexcept;
+using kernel = void (*)(std::uint64_t, std::uint64_t, std::uint64_t, std::uint64_t*,
+                        std::size_t) noexcept;
 
 void expect_the_portable_words(kernel k) {
     constexpr std::uint64_t all_ones = ~std::uint64_t{0};
@@ -23,11 +25,13 @@ void expect_the_portable_words(kernel k) {
         for (const std::uint64_t first :
              {std::uint64_t{0}, std::uint64_t{1}, std::uint64_t{16}, (std::uint64_t{1} << 32) - 16,
               (std::uint64_t{1} << 32) - 5, (all_ones >> 1) - 15}) {
-            words expected{};
-            words got{};
-            refill_portably(place, first, expected.data());
-            k(place.key, place.upper, first, got.data());
-            EXPECT_EQ(got, expected) << first;
+            for (const std::size_t count : {std::size_t{0}, std::size_t{1}, buffers}) {
+                words expected{};
+                words got{};
+                refill_portably(place, first, expected.data(), count);
+                k(place.key, place.upper, first, got.data(), count);
+                EXPECT_EQ(got, expected) << first;
+            }
         }
     }
 }
@@ -54,8 +58,8 @@ TEST(Refill, Avx512KernelGivesThePortableWords) {
 
 TEST(Refill, TheChosenKernelGivesThePortableWords) {
     expect_the_portable_words([](std::uint64_t key, std::uint64_t upper, std::uint64_t first,
-                                 std::uint64_t* out) noexcept {
-        leat::detail::refill({key, upper}, first, out);
+                                 std::uint64_t* out, std::size_t count) noexcept {
+        leat::detail::refill({key, upper}, first, out, count);
     });
 }
 

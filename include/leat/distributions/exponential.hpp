@@ -20,6 +20,7 @@
 #include "leat/distributions/detail/law.hpp"
 #include "leat/distributions/detail/ziggurat.hpp"
 
+#include <cstdint>
 #include <limits>
 
 namespace leat {
@@ -76,8 +77,14 @@ public:
     /// A draw.
     template <random_words G>
     [[nodiscard, gnu::always_inline]] constexpr Real operator()(G& g) const {
-        const double e = detail::standard_exponential(g);
-        return detail::into_positive<Real>(detail::held(e / static_cast<double>(rate())));
+        return from_standard(detail::standard_exponential(g));
+    }
+    /// For fills: the draw whose first 64-bit word is `word`, where that is accepted at once.
+    [[gnu::always_inline]] constexpr bool from_word(std::uint64_t word, Real& x) const noexcept {
+        double e = 0;
+        const bool accepted = detail::exponential_at_once(word, e);
+        x = from_standard(e);
+        return accepted;
     }
 
     [[nodiscard]] constexpr Real rate() const noexcept { return this->param().rate; }
@@ -91,6 +98,9 @@ public:
     [[nodiscard]] static constexpr Real max() noexcept { return std::numeric_limits<Real>::max(); }
 
 private:
+    [[gnu::always_inline]] constexpr Real from_standard(double e) const noexcept {
+        return detail::into_positive<Real>(detail::held(e / static_cast<double>(rate())));
+    }
     constexpr detail::scaled scaled_mean() const noexcept {
         const detail::scaled parts = detail::split(static_cast<double>(rate()));
         return {detail::held(1.0 / parts.factor), -parts.exponent};

@@ -21,6 +21,7 @@
 #include "leat/distributions/detail/law.hpp"
 #include "leat/distributions/detail/ziggurat.hpp"
 
+#include <cstdint>
 #include <limits>
 
 namespace leat {
@@ -69,10 +70,14 @@ public:
     /// A draw.
     template <random_words G>
     [[nodiscard, gnu::always_inline]] constexpr Real operator()(G& g) const {
-        using real = detail::strict<double>;
-        const double z = detail::standard_normal(g);
-        const double x = (real(mean_()) + real(sd_()) * z).value;
-        return sd() == 0 ? this->param().mean : detail::into_signed<Real>(x);
+        return from_standard(detail::standard_normal(g));
+    }
+    /// For fills: the draw whose first 64-bit word is `word`, where that is accepted at once.
+    [[gnu::always_inline]] constexpr bool from_word(std::uint64_t word, Real& x) const noexcept {
+        double z = 0;
+        const bool accepted = detail::normal_at_once(word, z);
+        x = from_standard(z);
+        return accepted;
     }
 
     [[nodiscard]] constexpr Real sd() const noexcept { return this->param().sd; }
@@ -92,6 +97,11 @@ public:
     [[nodiscard]] static constexpr Real max() noexcept { return std::numeric_limits<Real>::max(); }
 
 private:
+    [[gnu::always_inline]] constexpr Real from_standard(double z) const noexcept {
+        using real = detail::strict<double>;
+        const double x = (real(mean_()) + real(sd_()) * z).value;
+        return sd() == 0 ? this->param().mean : detail::into_signed<Real>(x);
+    }
     constexpr double mean_() const noexcept { return static_cast<double>(this->param().mean); }
     constexpr double sd_() const noexcept { return static_cast<double>(this->param().sd); }
 };

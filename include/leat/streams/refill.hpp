@@ -13,6 +13,7 @@
 #include "leat/streams/path.hpp" // stream_place
 
 #include <array>
+#include <cstddef>
 #include <cstdint>
 #include <type_traits>
 
@@ -32,24 +33,26 @@ constexpr std::array<std::uint64_t, 2> stream_block(stream_place place, std::uin
 constexpr std::uint64_t stream_buffer_words = 32;
 
 /// The same by the portable code alone: constant evaluation, and what kernels are tested against.
-constexpr void refill_portably(stream_place place, std::uint64_t first,
-                               std::uint64_t* words) noexcept {
-    for (std::uint64_t i = 0; i < stream_buffer_words / 2; ++i) {
+constexpr void refill_portably(stream_place place, std::uint64_t first, std::uint64_t* words,
+                               std::size_t buffers = 1) noexcept {
+    for (std::size_t i = 0; i < buffers * (stream_buffer_words / 2); ++i) {
         const auto pair = stream_block(place, first + i);
         words[2 * i] = pair[0];
         words[2 * i + 1] = pair[1];
     }
 }
 
-/// All words of 16 consecutive blocks, starting with block `first`: 32 words.
-constexpr void refill(stream_place place, std::uint64_t first, std::uint64_t* words) noexcept {
+/// All words of 16 consecutive blocks, starting with block `first`: 32 words. With `buffers`, those
+/// of so many times 16 blocks.
+constexpr void refill(stream_place place, std::uint64_t first, std::uint64_t* words,
+                      std::size_t buffers = 1) noexcept {
 #if LEAT_VECTOR_KERNELS
     if (!std::is_constant_evaluated()) {
-        philox_stream_words(place.key, place.upper, first, words);
+        philox_stream_words(place.key, place.upper, first, words, buffers);
         return;
     }
 #endif
-    refill_portably(place, first, words);
+    refill_portably(place, first, words, buffers);
 }
 
 } // namespace leat::detail

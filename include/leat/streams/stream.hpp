@@ -22,12 +22,15 @@
 #define LEAT_STREAMS_STREAM_HPP
 
 #include "leat/core/errors.hpp"
+#include "leat/core/sizes.hpp"
 #include "leat/streams/address.hpp"
 #include "leat/streams/path.hpp"
 #include "leat/streams/refill.hpp"
 
 #include <array>
+#include <cstddef>
 #include <cstdint>
+#include <span>
 #include <utility> // exchange
 
 namespace leat {
@@ -92,6 +95,30 @@ public:
             refill();
         }
         return words_[cursor_++];
+    }
+
+    /// Writes the words that drawing one by one would give, and stands where that would. At the
+    /// limit it throws `stream_exhausted`, having written the words up to there.
+    constexpr void draw_into(std::span<std::uint64_t> out) {
+        constexpr std::size_t buffer = detail::stream_buffer_words;
+        std::size_t i = 0;
+        while (i < out.size()) {
+            if (cursor_ == end_ && position() % buffer == 0 && !is_moved_from_) {
+                // Whole buffers go straight to their place.
+                const std::uint64_t left = limit_ > position() ? limit_ - position() : 0;
+                const std::size_t whole = detail::smaller(out.size() - i, left) / buffer;
+                detail::refill({key_, upper_}, position() / 2, out.data() + i, whole);
+                seek(position() + whole * buffer);
+                i += whole * buffer;
+                if (i == out.size()) {
+                    break;
+                }
+            }
+            out[i++] = (*this)();
+            while (cursor_ != end_ && i < out.size()) {
+                out[i++] = words_[cursor_++];
+            }
+        }
     }
 
     /// How many words have been drawn, counted from the start of the stream.
@@ -237,6 +264,18 @@ public:
         has_second_ = !odd;
         second_ = pair[1];
         return pair[odd ? 1 : 0];
+    }
+
+    /// Writes the words that drawing one by one would give; see stream, at whose speed it does so.
+    constexpr void draw_into(std::span<std::uint64_t> out) {
+        const std::uint64_t left = is_moved_from_ || position_ >= limit_ ? 0 : limit_ - position_;
+        const std::size_t allowed = detail::smaller(out.size(), left);
+        stream buffered(address());
+        buffered.draw_into(out.first(allowed));
+        seek(buffered.position());
+        if (allowed < out.size()) {
+            (*this)(); // says what is wrong
+        }
     }
 
     [[nodiscard]] constexpr std::uint64_t position() const noexcept { return position_; }

@@ -70,6 +70,11 @@ public:
         const std::uint64_t word = detail::unit_word<Real>(g);
         return map_(word);
     }
+    /// The draw whose 64-bit word is `word`, for fills: it decides alone.
+    constexpr bool from_word(std::uint64_t word, Real& x) const noexcept {
+        x = map_(word);
+        return true;
+    }
     /// One value of the interval `p`, leaving this one aside.
     template <random_words G>
     constexpr Real operator()(G& g, const param_type& p) const {

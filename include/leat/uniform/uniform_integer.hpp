@@ -95,6 +95,30 @@ constexpr std::uint64_t up_to(std::uint64_t last, G& g, const char* name) {
         last + 1, [&g] { return word64(g); }, name);
 }
 
+/// The offset that up_to(last, g) gives where g's next word is this one, if that is certain: false
+/// where it might be rejected. For an engine of 64-bit words.
+constexpr bool up_to_by_word(std::uint64_t last, std::uint64_t word,
+                             std::uint64_t& offset) noexcept {
+    constexpr std::uint64_t narrow = std::numeric_limits<std::uint32_t>::max();
+    if (last < narrow) {
+        const auto half = static_cast<std::uint32_t>(word >> 32);
+        const auto x = scale_word<std::uint32_t>(half, static_cast<std::uint32_t>(last + 1));
+        offset = x.upper;
+        return x.lower > last;
+    }
+    if (last == narrow) {
+        offset = word >> 32;
+        return true;
+    }
+    if (last == std::numeric_limits<std::uint64_t>::max()) {
+        offset = word;
+        return true;
+    }
+    const auto x = scale_word<std::uint64_t>(word, last + 1);
+    offset = x.upper;
+    return x.lower > last;
+}
+
 /// An integer as an error message takes it.
 template <number_integer Int>
 constexpr auto message_value(Int x) noexcept {
@@ -152,9 +176,14 @@ public:
     /// One value.
     template <random_words G>
     constexpr Int operator()(G& g) const {
-        const std::uint64_t offset = detail::up_to(span(), g, "uniform_integer");
-        // In unsigned arithmetic, where passing the ends of Int is defined.
-        return static_cast<Int>(static_cast<std::uint64_t>(range_.lo) + offset);
+        return at(detail::up_to(span(), g, "uniform_integer"));
+    }
+    /// For fills: the draw whose first 64-bit word is `word`, if no rejection is in question.
+    constexpr bool from_word(std::uint64_t word, Int& x) const noexcept {
+        std::uint64_t offset = 0;
+        const bool certain = detail::up_to_by_word(span(), word, offset);
+        x = at(offset);
+        return certain;
     }
     /// One value of the range `p`, leaving this one aside.
     template <random_words G>
@@ -212,6 +241,10 @@ public:
     }
 
 private:
+    // In unsigned arithmetic, where passing the ends of Int is defined.
+    [[nodiscard]] constexpr Int at(std::uint64_t offset) const noexcept {
+        return static_cast<Int>(static_cast<std::uint64_t>(range_.lo) + offset);
+    }
     [[nodiscard]] constexpr std::uint64_t span() const noexcept {
         return static_cast<std::uint64_t>(range_.hi) - static_cast<std::uint64_t>(range_.lo);
     }

@@ -73,13 +73,20 @@ template <random_words G>
     stuck("exponential");
 }
 
+/// The exponential that a word gives where it is accepted at once; else false.
+[[gnu::always_inline]] constexpr bool exponential_at_once(std::uint64_t word, double& x) noexcept {
+    const ziggurat_layer& layer = exponential_layers[layer_of(word)];
+    x = place_in_layer(word, layer);
+    return word < layer.bar;
+}
+
 /// An exponential of rate 1, above 0.
 template <random_words G>
 [[gnu::always_inline]] constexpr double standard_exponential(G& g) {
     const std::uint64_t word = word64(g);
-    const ziggurat_layer& layer = exponential_layers[layer_of(word)];
-    if (word < layer.bar) [[likely]] {
-        return place_in_layer(word, layer);
+    double x = 0;
+    if (exponential_at_once(word, x)) [[likely]] {
+        return x;
     }
     return standard_exponential_rest(g, word);
 }
@@ -126,13 +133,20 @@ template <random_words G>
     stuck("normal");
 }
 
+/// The normal that a word gives where it is accepted at once; else false.
+[[gnu::always_inline]] constexpr bool normal_at_once(std::uint64_t word, double& x) noexcept {
+    const ziggurat_layer& layer = normal_layers[layer_of(word)];
+    x = with_sign_of(word, place_in_layer(word, layer));
+    return word < layer.bar;
+}
+
 /// A normal of mean 0 and standard deviation 1.
 template <random_words G>
 [[gnu::always_inline]] constexpr double standard_normal(G& g) {
     const std::uint64_t word = word64(g);
-    const ziggurat_layer& layer = normal_layers[layer_of(word)];
-    if (word < layer.bar) [[likely]] {
-        return with_sign_of(word, place_in_layer(word, layer));
+    double x = 0;
+    if (normal_at_once(word, x)) [[likely]] {
+        return x;
     }
     return standard_normal_rest(g, word);
 }

@@ -5,6 +5,7 @@
 
 #include "leat/engines/kernels/instruction_set.hpp"
 
+#include <cstddef>
 #include <cstdint>
 
 #if LEAT_VECTOR_KERNELS
@@ -15,20 +16,21 @@
 
 namespace leat::detail {
 
-/// The 32 words of blocks first to first + 15 of the stream (key, upper).
+/// The words of `sets` times 16 blocks of the stream (key, upper), from block `first` on; two words
+/// a block.
 inline void philox_stream_words(std::uint64_t key, std::uint64_t upper, std::uint64_t first,
-                                std::uint64_t* words) noexcept {
+                                std::uint64_t* words, std::size_t sets) noexcept {
 #if defined(__x86_64__)
     switch (best_instruction_set()) {
     case instruction_set::avx512:
-        return kernels_avx512::philox_stream_words(key, upper, first, words);
+        return kernels_avx512::philox_stream_words(key, upper, first, words, sets);
     case instruction_set::avx2:
-        return kernels_avx2::philox_stream_words(key, upper, first, words);
+        return kernels_avx2::philox_stream_words(key, upper, first, words, sets);
     case instruction_set::baseline:
         break;
     }
 #endif
-    kernels_baseline::philox_stream_words(key, upper, first, words);
+    kernels_baseline::philox_stream_words(key, upper, first, words, sets);
 }
 
 } // namespace leat::detail

@@ -31,7 +31,7 @@ using half_lanes [[gnu::vector_size(8 * LEAT_KERNEL_LANES)]] = int;
 
 /// The 32 words of the blocks first to first + 15 of the stream (key, upper); see
 /// streams/refill.hpp.
-inline void philox_stream_words(std::uint64_t key, std::uint64_t upper, std::uint64_t first,
+[[gnu::always_inline]] inline void philox_set(std::uint64_t key, std::uint64_t upper, std::uint64_t first,
                                 std::uint64_t* words) noexcept {
     constexpr int groups = 16 / LEAT_KERNEL_LANES;
     lanes x0[groups];
@@ -82,6 +82,16 @@ inline void philox_stream_words(std::uint64_t key, std::uint64_t upper, std::uin
         std::uint64_t* to = words + 2 * LEAT_KERNEL_LANES * g;
         __builtin_memcpy(to, &front, sizeof front);
         __builtin_memcpy(to + LEAT_KERNEL_LANES, &back, sizeof back);
+    }
+}
+
+/// The words of `sets` times 16 blocks from block `first` on.
+inline void philox_stream_words(std::uint64_t key, std::uint64_t upper, std::uint64_t first,
+                                std::uint64_t* words, std::size_t sets) noexcept {
+    for (; sets > 0; --sets) {
+        philox_set(key, upper, first, words);
+        first += 16;
+        words += 32;
     }
 }
 

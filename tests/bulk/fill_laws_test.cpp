@@ -1,0 +1,12 @@
+// Promise P6 for every sampler of distributions/; they join in support/sampler_list.hpp.
+
+#include "bulk/fill_equals_loop.hpp"
+#include "support/sampler_list.hpp"
+
+#include <gtest/gtest.h>
+
+namespace {
+
+TEST(FillEqualsLoop, EveryLaw) { leat_test::each_law(leat_test::expect_every_fill_equals_loop{}); }
+
+} // namespace
