@@ -74,6 +74,6 @@ configure_and_build() {
     if [ ! -f "$folder/CMakeCache.txt" ] && has_command ninja >/dev/null; then
         set -- -G Ninja "$@"
     fi
-    cmake -S "$root" -B "$folder" -D CMAKE_BUILD_TYPE=Release "$@"
+    cmake -S "$root" -B "$folder" -D CMAKE_BUILD_TYPE=Release -D CMAKE_CXX_FLAGS_RELEASE=-O2 "$@"
     cmake --build "$folder" --target "$target" --parallel "$(jobs)"
 }

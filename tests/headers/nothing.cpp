@@ -1,1 +1,1 @@
-// Empty on purpose: a header to be compiled alone is included from the command line.
+// Empty on purpose: for headers that are included from the command line.
