@@ -60,7 +60,7 @@ golden=$root/tests/golden/digests.txt
 failed=""
 rows=0
 
-print_row() { printf '%-9s %-72s %4s %-6s %-9s %4s\n' "$@"; }
+print_row() { printf '%-9s %-70s %4s %-6s %-9s %4s\n' "$@"; }
 
 build() { # FOLDER COMPILER FLAGS...: one process a source file, so that all cores have work
     folder=$1
@@ -89,6 +89,7 @@ same() { # TARGET RUNNER COMPILER FLAGS...: a build whose digests must be the go
         head -n 20 "$folder.log" >"$folder.why"
     elif ! $runner "$folder/digest.exe" >"$folder.out" 2>"$folder.why"; then
         result=CRASHED
+        echo "it ended with an error" >>"$folder.why"
     elif tr -d '\r' <"$folder.out" | diff "$golden" - >"$folder.diff"; then
         result=same
     else
@@ -101,8 +102,9 @@ same() { # TARGET RUNNER COMPILER FLAGS...: a build whose digests must be the go
     if [ $result != same ]; then
         failed="$failed $rows"
     fi
+    label="$*"
     # shellcheck disable=SC2086 # two words
-    print_row "$target" "$*" $machine "$result" $(($(date +%s) - began))
+    print_row "$target" "${label%" $m32"}" $machine "$result" $(($(date +%s) - began))
 }
 
 refused() { # TARGET TEXT COMPILER FLAGS...: a build that must stop with TEXT
@@ -122,25 +124,29 @@ refused() { # TARGET TEXT COMPILER FLAGS...: a build that must stop with TEXT
     if [ $result != refused ]; then
         failed="$failed $rows"
     fi
-    print_row "$target" "$*" - - "$result" $(($(date +%s) - began))
+    label="$*"
+    print_row "$target" "${label%" $m32"}" - - "$result" $(($(date +%s) - began))
 }
 
 host=$(uname -m)
 # The kernel's headers, which g++-12-multilib alone does not make visible to -m32.
 m32="-idirafter /usr/include/x86_64-linux-gnu"
-# shellcheck disable=SC2086 # $m32 is two words
+# Some kernels run no 32-bit programs themselves.
+run32=env
+echo 'int main() {}' | g++ -m32 -x c++ - -o "$work/m32"
+"$work/m32" 2>/dev/null || run32=qemu-i386
 print_row target compiler bits bytes result "s"
 
 same "$host" env g++ -O0
 same "$host" env g++ -O2
 same "$host" env g++ -O3 -march=native -ffp-contract=fast
-same "$host" env clang++ -O0
-same "$host" env clang++ -O2
 same "$host" env clang++ -O3 -march=native -ffp-contract=fast
-same i686 env g++ -O2 -m32 -msse2 -mfpmath=sse $m32
+same i686 $run32 g++ -O2 -m32 -msse2 -mfpmath=sse $m32
 same aarch64 qemu-aarch64 aarch64-linux-gnu-g++ -O2 -static
 same s390x qemu-s390x s390x-linux-gnu-g++ -O2 -static
 if [ $quick = no ]; then
+    same "$host" env clang++ -O0
+    same "$host" env clang++ -O2
     same "$host" env clang++-19 -O0
     same "$host" env clang++-19 -O2
     same "$host" env clang++-19 -O3 -march=native -ffp-contract=fast
@@ -148,7 +154,7 @@ if [ $quick = no ]; then
     same "$host" env g++ -O1 -fsanitize=address,undefined -fno-sanitize-recover=all
     same "$host" env g++ -O2 -flto=auto
     same "$host" env g++ -O2 -fno-exceptions -fno-rtti
-    same i686 env clang++ -O2 -m32 -msse2 -mfpmath=sse $m32
+    same i686 $run32 clang++ -O2 -m32 -msse2 -mfpmath=sse $m32
     same aarch64 qemu-aarch64 aarch64-linux-gnu-g++ -O3 -ffp-contract=fast -static
     same armhf qemu-arm arm-linux-gnueabihf-g++ -O2 -static
     same riscv64 qemu-riscv64 riscv64-linux-gnu-g++ -O2 -static
