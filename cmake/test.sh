@@ -12,6 +12,7 @@ if [ "${1-}" = --slow ]; then
 fi
 
 need_build_tools
+need python3 has_command python3
 need pkgconf has_command pkg-config
 need libgtest-dev has_header gtest/gtest.h
 need nlohmann-json3-dev has_header nlohmann/json.hpp
