@@ -1,11 +1,10 @@
 // Engines that cannot do what is asked of them, and parameters that make no engine.
 //
-// refused 1: leat::jump: this engine has no algebra to jump by; for leat::shuffled and
-// leat::shuffled_by, jump the base engine and wrap it then refused 2: leat::rewind: this engine has
-// no algebra to jump by; for leat::shuffled and leat::shuffled_by, rewind the base engine and wrap
-// it then refused 3: leat::lehmer: multiplier and modulus must have no common factor refused 4:
-// leat::lehmer: the multiplier must be above 0 and below the modulus refused 5:
-// leat::multiply_with_carry: the sum of the multipliers must be at most 2^w
+// refused 1: leat::jump: this engine has no algebra to jump by; for leat::shuffled
+// refused 2: leat::rewind: this engine has no algebra to jump by; for leat::shuffled
+// refused 3: leat::lehmer: multiplier and modulus must have no common factor
+// refused 4: leat::lehmer: the multiplier must be above 0 and below the modulus
+// refused 5: leat::multiply_with_carry: the sum of the multipliers must be at most 2^w
 
 #include "leat/engines/lehmer.hpp"
 #include "leat/engines/multiply_with_carry.hpp"

@@ -2,16 +2,17 @@
 //
 // refused 1 (g++): use of deleted function 'leat::stream::stream(const leat::stream&)'
 // refused 1 (clang++): call to deleted constructor of 'leat::stream'
-// refused 2 (g++): use of deleted function 'leat::stream& leat::stream::operator=(const
-// leat::stream&)' refused 2 (clang++): overload resolution selected deleted operator '=' refused 3
-// (g++): use of deleted function 'leat::thin_stream::thin_stream(const leat::thin_stream&)' refused
-// 3 (clang++): call to deleted constructor of 'leat::thin_stream' refused 4: a bool is no path
-// part; write an integer or a text refused 5: a single character is no path part; write a text
+// refused 2 (g++): use of deleted function 'leat::stream& leat::stream::operator=(
+// refused 2 (clang++): overload resolution selected deleted operator '='
+// refused 3 (g++): use of deleted function 'leat::thin_stream::thin_stream(const
+// refused 3 (clang++): call to deleted constructor of 'leat::thin_stream'
+// refused 4: a bool is no path part; write an integer or a text
+// refused 5: a single character is no path part; write a text
 // refused 6: a floating-point number is no path part; write an integer
-// refused 7: a path part is an integer of up to 64 bits or a text; cast an enumeration to int
+// refused 7: a path part is an integer of up to 64 bits or a text; cast an enumeration to
 // refused 8: a floating-point number is no path part; write an integer
-// refused 9: this engine has fewer than 128 bits of state, too few to give every path its own; cut
-// one such engine into blocks instead
+// refused 10: nullptr is no path part; write an integer or a text
+// refused 9: this engine has fewer than 128 bits of state, too few to give every path its
 
 #include "leat/engines/lehmer.hpp"
 #include "leat/engines/philox.hpp"
@@ -84,6 +85,12 @@ int main() {
     t = t.offspring(1.0f);
 #else
     t = t.offspring(1);
+#endif
+
+#if REFUSED == 10
+    t = study.stream("pump", nullptr);
+#else
+    t = study.stream("pump", "nothing");
 #endif
 
 #if REFUSED == 9
