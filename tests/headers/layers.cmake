@@ -10,7 +10,7 @@ set(below_distributions core uniform)
 set(below_regions core uniform distributions)
 set(samplers core engines uniform streams distributions regions)
 set(below_bulk ${samplers})
-foreach(top sequences estimate evidence state compat testing)
+foreach(top sequences estimate evidence state compat testing self_check)
     set(below_${top} ${samplers} bulk)
 endforeach()
 
