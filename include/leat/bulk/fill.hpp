@@ -33,6 +33,7 @@
 #ifndef LEAT_BULK_FILL_HPP
 #define LEAT_BULK_FILL_HPP
 
+#include "leat/bulk/kernels/convert.hpp"
 #include "leat/bulk/word_cursor.hpp"
 #include "leat/core/concepts.hpp"
 #include "leat/uniform/words.hpp" // word64
@@ -94,14 +95,55 @@ concept has_fill_from_words = requires(const Sampler& sampler, std::span<T> out,
     requires std::same_as<typename Sampler::result_type, T>;
 };
 
+/// A sampler whose draws are unit_products, for some of its parameters.
+template <class Sampler>
+concept has_as_product = requires(const Sampler& sampler) {
+    sampler.as_product().applies;
+};
+
+/// A sampler whose draws are of a short_range, for some of its parameters.
+template <class Sampler>
+concept has_as_short_range = requires(const Sampler& sampler) {
+    sampler.as_short_range().count;
+};
+
+/// Draws by kernels where there is one for the sampler: from the start of `ahead`, as many as the
+/// kernel takes. Returns how many, often 0.
+template <class T, class Sampler>
+constexpr std::size_t fill_by_kernel([[maybe_unused]] std::span<T> out,
+                                     [[maybe_unused]] const Sampler& sampler,
+                                     [[maybe_unused]] std::span<const std::uint64_t> ahead) {
+#if LEAT_VECTOR_KERNELS
+    if (!std::is_constant_evaluated()) {
+        if constexpr (has_as_product<Sampler>) {
+            const auto p = sampler.as_product();
+            if (p.applies) {
+                unit_products(ahead.data(), out.data(), ahead.size(), p);
+                return ahead.size();
+            }
+        } else if constexpr (has_as_short_range<Sampler> && (sizeof(T) == 4 || sizeof(T) == 8)) {
+            const short_range range = sampler.as_short_range();
+            if (range.count != 0) {
+                const std::uint32_t surplus = (0 - range.count) % range.count;
+                using word = std::conditional_t<sizeof(T) == 4, std::uint32_t, std::uint64_t>;
+                // Written by memcpy alone, so that the type does not matter.
+                return short_integers(ahead.data(), reinterpret_cast<word*>(out.data()),
+                                      ahead.size(), range, surplus);
+            }
+        }
+    }
+#endif
+    return 0;
+}
+
 /// Draws whose first word mostly decides alone, in a loop that the rare others do not burden.
 template <class T, class Sampler, class Words>
-constexpr void fill_by_word(std::span<T> out, const Sampler& sampler, Words& words) {
-    std::size_t i = 0;
-    while (i < out.size()) {
+constexpr void fill_by_word(std::span<T> out, const Sampler& given, Words& words) {
+    const Sampler sampler = given; // a copy cannot alias the output
+    for (std::size_t i = 0; i < out.size();) {
         const std::span<const std::uint64_t> ahead = words.ahead(out.size() - i);
         const std::span<T> part = out.subspan(i, ahead.size());
-        std::size_t k = 0;
+        std::size_t k = fill_by_kernel(part, sampler, ahead);
         while (k < part.size() && sampler.from_word(ahead[k], part[k]))
             [[likely]] { ++k; }
         words.skip(k);

@@ -30,6 +30,7 @@
 #include "leat/core/errors.hpp"
 #include "leat/core/gf2.hpp"
 #include "leat/core/wide_integer.hpp"
+#include "leat/engines/kernels/braid.hpp"
 #include "leat/engines/xoshiro.hpp"
 
 #include <array>
@@ -38,6 +39,7 @@
 #include <cstdint>
 #include <iosfwd>
 #include <span>
+#include <type_traits>
 
 namespace leat {
 
@@ -68,8 +70,10 @@ constexpr std::uint64_t braid_word(const braid_state& s, std::size_t k) noexcept
     return std::rotl(s[k] + s[48 + k], 23) + s[k];
 }
 
-/// Draws whole rounds: 16 words each, from lane 0 to lane 15. A vector kernel may stand in here.
-constexpr void braid_rounds(braid_state& state, std::uint64_t* out, std::size_t rounds) noexcept {
+/// Draws whole rounds: 16 words each, from lane 0 to lane 15. By the portable code: constant
+/// evaluation, and what kernels are tested against.
+constexpr void braid_rounds_portably(braid_state& state, std::uint64_t* out,
+                                     std::size_t rounds) noexcept {
     braid_state s = state; // a copy cannot alias the output
     for (; rounds > 0; --rounds) {
         for (std::size_t k = 0; k < braid_lanes; ++k) {
@@ -79,6 +83,17 @@ constexpr void braid_rounds(braid_state& state, std::uint64_t* out, std::size_t 
         braid_step::step(s);
     }
     state = s;
+}
+
+/// The same by the fastest way there is.
+constexpr void braid_rounds(braid_state& state, std::uint64_t* out, std::size_t rounds) noexcept {
+#if LEAT_VECTOR_KERNELS
+    if (!std::is_constant_evaluated()) {
+        braid_rounds_by_vectors(state.data(), out, rounds);
+        return;
+    }
+#endif
+    braid_rounds_portably(state, out, rounds);
 }
 
 /// x^(2^252) modulo the characteristic polynomial of xoshiro256: its 16th power is x, which no

@@ -25,6 +25,12 @@
 
 namespace leat {
 
+class source;
+
+namespace detail {
+constexpr stream_address chunk_address(const source& from, std::uint64_t chunk);
+} // namespace detail
+
 /// A seed and the start of a path. A value: copy it, pass it to threads, keep it in entities.
 class source {
 public:
@@ -65,6 +71,8 @@ public:
     friend constexpr bool operator==(const source&, const source&) = default;
 
 private:
+    friend constexpr stream_address detail::chunk_address(const source&, std::uint64_t);
+
     constexpr explicit source(const detail::path_hash& path) noexcept : path_(path) {}
 
     template <class... Parts>
@@ -83,6 +91,11 @@ private:
 
     detail::path_hash path_;
 };
+
+/// Where the words of a chunk of an array come from (bulk/fill_chunks.hpp).
+constexpr stream_address detail::chunk_address(const source& from, std::uint64_t chunk) {
+    return from.start(path_kind::chunk, chunk);
+}
 
 } // namespace leat
 

@@ -75,6 +75,10 @@ public:
         x = map_(word);
         return true;
     }
+    /// For fills, which have kernels for products.
+    [[nodiscard]] constexpr detail::unit_product<Real, Ends> as_product() const noexcept {
+        return map_.as_product();
+    }
     /// One value of the interval `p`, leaving this one aside.
     template <random_words G>
     constexpr Real operator()(G& g, const param_type& p) const {

@@ -95,6 +95,12 @@ constexpr std::uint64_t up_to(std::uint64_t last, G& g, const char* name) {
         last + 1, [&g] { return word64(g); }, name);
 }
 
+/// The law that is lowest + multiply_shift(count) of word32s, modulo 2^64.
+struct short_range {
+    std::uint32_t count = 0; // 0 where the law in question is not one
+    std::uint64_t lowest = 0;
+};
+
 /// The offset that up_to(last, g) gives where g's next word is this one, if that is certain: false
 /// where it might be rejected. For an engine of 64-bit words.
 constexpr bool up_to_by_word(std::uint64_t last, std::uint64_t word,
@@ -184,6 +190,12 @@ public:
         const bool certain = detail::up_to_by_word(span(), word, offset);
         x = at(offset);
         return certain;
+    }
+    /// For fills, which have kernels for ranges of fewer than 2^32 values.
+    [[nodiscard]] constexpr detail::short_range as_short_range() const noexcept {
+        constexpr std::uint64_t narrow = std::numeric_limits<std::uint32_t>::max();
+        return {span() < narrow ? static_cast<std::uint32_t>(span() + 1) : 0,
+                static_cast<std::uint64_t>(range_.lo)};
     }
     /// One value of the range `p`, leaving this one aside.
     template <random_words G>

@@ -136,7 +136,10 @@ template <random_words G>
 /// The normal that a word gives where it is accepted at once; else false.
 [[gnu::always_inline]] constexpr bool normal_at_once(std::uint64_t word, double& x) noexcept {
     const ziggurat_layer& layer = normal_layers[layer_of(word)];
-    x = with_sign_of(word, place_in_layer(word, layer));
+    // The sign goes to the integer: the same value as with_sign_of(place_in_layer), sooner.
+    const std::uint64_t sign = 0 - ((word >> 8) & 1u);
+    const std::uint64_t odd = (((word >> 11) | 1u) ^ sign) - sign;
+    x = held(static_cast<double>(static_cast<std::int64_t>(odd)) * layer.width);
     return word < layer.bar;
 }
 

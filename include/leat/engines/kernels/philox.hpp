@@ -4,6 +4,7 @@
 #define LEAT_ENGINES_KERNELS_PHILOX_HPP
 
 #include "leat/engines/kernels/instruction_set.hpp"
+#include "leat/engines/kernels/lanes.hpp"
 
 #include <cstddef>
 #include <cstdint>

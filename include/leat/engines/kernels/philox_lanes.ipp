@@ -6,42 +6,19 @@
 
 namespace leat::detail::LEAT_KERNEL_SPACE {
 
-using lanes [[gnu::vector_size(8 * LEAT_KERNEL_LANES)]] = std::uint64_t;
-using half_lanes [[gnu::vector_size(8 * LEAT_KERNEL_LANES)]] = int;
-
-/// The full products of the low halves of the lanes.
-[[gnu::always_inline]] inline lanes multiply_low_halves(const lanes& a, const lanes& b) noexcept {
-#if defined(__x86_64__) && !defined(__clang__)
-    // g++ 12 does not find this instruction for a masked product on SSE2 and AVX2.
-#if LEAT_KERNEL_LANES == 2
-    return reinterpret_cast<lanes>(__builtin_ia32_pmuludq128(reinterpret_cast<half_lanes>(a),
-                                                             reinterpret_cast<half_lanes>(b)));
-#elif LEAT_KERNEL_LANES == 4
-    return reinterpret_cast<lanes>(__builtin_ia32_pmuludq256(reinterpret_cast<half_lanes>(a),
-                                                             reinterpret_cast<half_lanes>(b)));
-#else
-    using signed_lanes [[gnu::vector_size(64)]] = long long;
-    return reinterpret_cast<lanes>(__builtin_ia32_pmuludq512_mask(
-        reinterpret_cast<half_lanes>(a), reinterpret_cast<half_lanes>(b), signed_lanes{}, 0xFF));
-#endif
-#else
-    return (a & 0xFFFFFFFFu) * (b & 0xFFFFFFFFu);
-#endif
-}
-
 /// The 32 words of the blocks first to first + 15 of the stream (key, upper); see
 /// streams/refill.hpp.
-[[gnu::always_inline]] inline void philox_set(std::uint64_t key, std::uint64_t upper, std::uint64_t first,
-                                std::uint64_t* words) noexcept {
+[[gnu::always_inline]] inline void philox_set(std::uint64_t key, std::uint64_t upper,
+                                              std::uint64_t first, std::uint64_t* words) noexcept {
+    static constexpr std::uint64_t block_numbers[16] = {0, 1, 2,  3,  4,  5,  6,  7,
+                                                        8, 9, 10, 11, 12, 13, 14, 15};
     constexpr int groups = 16 / LEAT_KERNEL_LANES;
     lanes x0[groups];
     lanes x1[groups];
     lanes x2[groups];
     lanes x3[groups];
     for (int g = 0; g < groups; ++g) {
-        for (int i = 0; i < LEAT_KERNEL_LANES; ++i) {
-            x0[g][i] = first + static_cast<std::uint64_t>(g * LEAT_KERNEL_LANES + i);
-        }
+        x0[g] = load_lanes(block_numbers + LEAT_KERNEL_LANES * g) + first;
         x1[g] = x0[g] >> 32;
         x2[g] = lanes{} + upper;
         x3[g] = lanes{} + (upper >> 32);
@@ -80,8 +57,8 @@ using half_lanes [[gnu::vector_size(8 * LEAT_KERNEL_LANES)]] = int;
         const lanes back = __builtin_shufflevector(even, odd, 4, 12, 5, 13, 6, 14, 7, 15);
 #endif
         std::uint64_t* to = words + 2 * LEAT_KERNEL_LANES * g;
-        __builtin_memcpy(to, &front, sizeof front);
-        __builtin_memcpy(to + LEAT_KERNEL_LANES, &back, sizeof back);
+        store_lanes(to, front);
+        store_lanes(to + LEAT_KERNEL_LANES, back);
     }
 }
 

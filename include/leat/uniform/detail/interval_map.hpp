@@ -62,6 +62,15 @@ constexpr unit_fraction unit_fraction_of(std::uint64_t word) noexcept {
     }
 }
 
+/// The law that is factor * unit<Real, Ends>(g), rounded, then moved into lowest .. highest.
+template <class Real, ends Ends>
+struct unit_product {
+    bool applies = false; // whether the law in question is one
+    Real factor = 1;
+    Real lowest = 0;
+    Real highest = 1;
+};
+
 /// The map of words onto the interval between a < b, both finite and b - a not too small.
 template <class Real, ends Ends>
 class interval_map {
@@ -95,6 +104,11 @@ public:
 
     [[nodiscard]] constexpr Real a() const noexcept { return a_; }
     [[nodiscard]] constexpr Real b() const noexcept { return b_; }
+
+    /// The same as a product, which it is where a = 0.
+    [[nodiscard]] constexpr unit_product<Real, Ends> as_product() const noexcept {
+        return {route_ == route::from_zero, b_, first_, last_};
+    }
 
     /// The point of `word`: monotone in it, always inside.
     [[nodiscard]] constexpr Real operator()(std::uint64_t word) const noexcept {
