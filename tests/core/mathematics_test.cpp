@@ -2,6 +2,7 @@
 // (GNU MPFR 4, correctly rounded at 160 bits), the ends of the ranges, and the promise that
 // constant evaluation and run time give the same bits.
 
+#include "leat/core/arctangent.hpp"
 #include "leat/core/error_free.hpp"
 #include "leat/core/exponential.hpp"
 #include "leat/core/log_gamma.hpp"
@@ -206,6 +207,8 @@ TEST(Power, SaturatesAndKeepsItsFixedPoints) {
     EXPECT_EQ(ld::power(2.0, 1e300), largest);
     EXPECT_EQ(ld::power(2.0, -1e300), smallest);
     EXPECT_EQ(ld::power(0.5, std::numeric_limits<double>::infinity()), smallest);
+    EXPECT_EQ(ld::power(1.0, std::numeric_limits<double>::infinity()), 1.0);
+    EXPECT_EQ(ld::power(1.0, -std::numeric_limits<double>::infinity()), 1.0);
     EXPECT_EQ(ld::power(2.0, 1023.0), 0x1p1023);
     EXPECT_EQ(ld::power(2.0, -1022.0), smallest);
 }
@@ -250,6 +253,30 @@ TEST(SineCosine, IsExactAtQuarters) {
     }
 }
 
+TEST(Arctangent, IsWithinItsBound) {
+    points_of p;
+    double x = 0;
+    const auto mpfr_angle = [&](mpfr_ptr z, mpfr_ptr y) {
+        exact side(x);
+        mpfr_atan2(z, y, side, MPFR_RNDN);
+    };
+    const auto angle = [&](double y) { return ld::arctangent(y, x); };
+    for (const double span : {1.0, 7.0, 500.0}) { // ratios near 1, and of every size
+        within(
+            1.1,
+            [&] {
+                x = std::fabs(p.sized(-span, span));
+                return std::fabs(p.sized(-span, span));
+            },
+            angle, mpfr_angle);
+    }
+    EXPECT_EQ(ld::arctangent(0, 3), 0.0);
+    EXPECT_EQ(ld::arctangent(3, 0), M_PI / 2);
+    EXPECT_EQ(ld::arctangent(7, 7), M_PI / 4);
+    EXPECT_EQ(ld::arctangent(1e-300, 1e300), 0.0);
+    EXPECT_EQ(ld::arctangent(1e300, 1e-300), M_PI / 2);
+}
+
 // IEEE 754 demands a correctly rounded square root; both ways of computing it must be that.
 TEST(SquareRoot, IsCorrectlyRoundedBothWays) {
     points_of p;
@@ -282,6 +309,8 @@ TEST(LogGamma, IsWithinItsBound) { // fewer points: MPFR's is slow
         6, [&] { return p.between(2, 12); }, ld::log_gamma, mpfr_lngamma_of, 5000);
     within(
         6, [&] { return std::fabs(p.sized(-300, 300)); }, ld::log_gamma, mpfr_lngamma_of, 5000);
+    EXPECT_LT(ld::log_gamma(2.5e305), largest);
+    EXPECT_EQ(ld::log_gamma(2.6e305), std::numeric_limits<double>::infinity());
     EXPECT_EQ(ld::log_gamma(1.0), 0.0);
     EXPECT_EQ(ld::log_gamma(2.0), 0.0);
 }
@@ -337,7 +366,7 @@ TEST(Scaled, ProductsMayLeaveTheRangeOnTheWay) {
 // Promise: constant evaluation and run time agree. One function, run both ways.
 constexpr int values = 64;
 struct all_values {
-    std::array<double, 8 * values> x{};
+    std::array<double, 9 * values> x{};
     friend constexpr bool operator==(const all_values&, const all_values&) = default;
 };
 constexpr all_values evaluate_all() {
@@ -353,6 +382,7 @@ constexpr all_values evaluate_all() {
         v.x[n++] = ld::sine_cosine(x).sine + ld::sine_cosine(x).cosine;
         v.x[n++] = ld::square_root(x);
         v.x[n++] = ld::log_gamma(x);
+        v.x[n++] = ld::arctangent(x, 5);
     }
     return v;
 }

@@ -6,6 +6,7 @@ Run from the top of the repository; needs mpmath (Debian: python3-mpmath). It wr
     include/leat/core/exponential_table.hpp    2^(j/128), with the part that rounding cut off
     include/leat/core/logarithm_table.hpp      -ln of 128 short reciprocals, and a polynomial
     include/leat/core/sine_table.hpp           the sine of j/128 of a turn
+    include/leat/core/arctangent_table.hpp     the arctangent of j/64
     include/leat/core/log_gamma_table.hpp      ln Gamma on [1, 2], and Stirling's series
     include/leat/distributions/detail/ziggurat_table.hpp   layers of exp(-x^2/2) and exp(-x)
 
@@ -14,7 +15,7 @@ table means stands in the header that uses it.
 """
 import struct
 import subprocess
-from mpmath import mp, mpf, floor, log, exp, sin, pi, loggamma, chebyfit, sqrt, erfc, bernoulli, zeta
+from mpmath import mp, mpf, floor, log, exp, sin, atan, pi, loggamma, chebyfit, sqrt, erfc, bernoulli, zeta
 
 mp.dps = 60
 
@@ -165,6 +166,30 @@ inline constexpr sine_entry sine_table[128] = {
           "The sine of 128 equal parts of a turn, for core/sine_cosine.hpp.", body)
 
 
+def arctangent():
+    body = "namespace leat::detail {\n\n"
+    half = double(pi / 2)
+    body += constant("half_pi", half, "pi / 2")
+    body += constant("half_pi_rest", double(pi / 2 - mpf(half)), "and what rounding cut off")
+    body += """
+/// arctan(j / 64) = value + rest.
+struct arctangent_entry {
+    double value;
+    double rest;
+};
+
+inline constexpr arctangent_entry arctangent_table[65] = {
+"""
+    entries = []
+    for j in range(65):
+        a = atan(mpf(j) / 64)
+        v = double(a)
+        entries.append("{%s, %s}" % (literal(v), literal(double(a - mpf(v)))))
+    body += rows(entries, 2) + "\n};\n\n} // namespace leat::detail\n"
+    write("include/leat/core/arctangent_table.hpp", "LEAT_CORE_ARCTANGENT_TABLE_HPP",
+          "The arctangent of 65 ratios, for core/arctangent.hpp.", body)
+
+
 def log_gamma():
     # ln Gamma(1.5 + t) = (t - 1/2) (t + 1/2) p(t) for |t| <= 1/2: p has no zero there.
     def p(t):
@@ -257,5 +282,6 @@ if __name__ == "__main__":
     exponential()
     logarithm()
     sine()
+    arctangent()
     log_gamma()
     ziggurat()
