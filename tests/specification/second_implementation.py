@@ -1,17 +1,20 @@
 #!/usr/bin/env python3
 """A second implementation of leat's specification, from the page alone.
 
-It shares no code with the library and uses nothing but Python's integers and exact fractions. Run
-without arguments it checks every vector of tests/golden/vectors.json that it covers; with --write
-it computes the expected values and writes the file, so that the library is tested against this
-program and not against itself.
+It shares no code with the library and uses Python's integers, exact fractions and, for the laws,
+its floats (binary64, each operation rounded by itself). Run without arguments it checks every vector
+of tests/golden/vectors.json; with --write it computes the expected values and writes the file, so
+that the library is tested against this program and not against itself. Of the library it takes the
+tables alone, tests/golden/tables.json.
 """
 
 import json
 import os
+import struct
 import sys
 from fractions import Fraction
 
+GOLDEN = os.path.join(os.path.dirname(os.path.abspath(__file__)), "..", "golden")
 M32 = 0xFFFFFFFF
 M64 = 0xFFFFFFFFFFFFFFFF
 
@@ -112,6 +115,157 @@ class Stream:
             self.key, self.upper, self.position, low & M32)
 
 
+# ---- Mappings ----
+
+FORMATS = {"double": (53, "<d", "<Q", "%016x"), "float": (24, "<f", "<I", "%08x")}
+
+
+def nearest(x, digits):
+    """The fraction x >= 0 rounded to that many binary digits, ties to even, exactly."""
+    if x == 0:
+        return x
+    unit = Fraction(1)
+    while x / unit >= 2 ** digits:
+        unit *= 2
+    while x / unit < 2 ** (digits - 1):
+        unit /= 2
+    return round(x / unit) * unit  # round() of a fraction takes ties to even
+
+
+def unit(word, real, ends):
+    """The exact value of the mapping; `word` has 64 bits for a double, 32 for a float."""
+    digits = FORMATS[real][0]
+    width = 64 if real == "double" else 32
+    if ends == "open":
+        k = word >> (width - digits + 1)
+        return Fraction(2 * k + 1, 2 ** digits)
+    k = word >> (width - digits)
+    if ends == "closed_open":
+        return Fraction(k, 2 ** digits)
+    if ends == "open_closed":
+        return Fraction(k + 1, 2 ** digits)
+    return nearest(Fraction(k, 2 ** digits - 1), digits)
+
+
+def bits(x, real="double"):
+    """The representation of a number that fits the format, in hexadecimal."""
+    _, as_real, as_word, text = FORMATS[real]
+    packed = struct.pack(as_real, float(x))
+    assert Fraction(struct.unpack(as_real, packed)[0]) == x
+    return text % struct.unpack(as_word, packed)[0]
+
+
+def offset(last, s):
+    """Uniform on 0 .. last; the draws of `below` and `uniform_integer`."""
+    if last <= M32:
+        width, draw = 32, lambda: s() >> 32
+    else:
+        width, draw = 64, s
+    n = last + 1
+    if n == 2 ** width:
+        return draw()
+    while True:
+        product = draw() * n
+        if product % 2 ** width >= 2 ** width % n:
+            return product >> width
+
+
+# ---- Laws: every + - * / below is one operation on binary64 ----
+
+
+def tables():
+    def real(x):
+        return float.fromhex(x)
+
+    with open(os.path.join(GOLDEN, "tables.json"), encoding="ascii") as f:
+        raw = json.load(f)
+    result = {"exp": {name: real(raw["exp"][name])
+                      for name in ("steps_per_log", "log_step_high", "log_step_low")}}
+    result["exp"]["powers"] = [(real(v), real(r)) for v, r in raw["exp"]["powers"]]
+    for law in ("normal", "exponential"):
+        result[law] = {"tail": real(raw[law]["tail"]),
+                       "layers": [(real(w), int(bar, 16)) for w, bar in raw[law]["layers"]],
+                       "heights": [real(h) for h in raw[law]["heights"]]}
+    return result
+
+
+TABLES = tables()
+
+
+def exp(x):
+    """e^x for -700 < x < 700."""
+    t = TABLES["exp"]
+    steps = (x * t["steps_per_log"] + 6755399441055744.0) - 6755399441055744.0  # 1.5 * 2^52
+    r = (x - steps * t["log_step_high"]) - steps * t["log_step_low"]
+    q = r * r
+    series = q * ((0.5 + r * (1 / 6))
+                  + q * ((1 / 24 + r * (1 / 120)) + q * (1 / 720)))
+    n = int(steps)
+    value, rest = t["powers"][n % 128]
+    growth = r + (series + rest)
+    return (value + value * growth) * 2.0 ** (n // 128)  # the last product is exact
+
+
+class Law:
+    """The two ziggurats. `branches` collects what was met on the way."""
+
+    def __init__(self, s):
+        self.s, self.branches = s, set()
+
+    def trial(self, law):
+        word = self.s()
+        width, bar = TABLES[law]["layers"][word & 255]
+        x = float(2 * (word >> 12) + 1) * width
+        return word, x, word < bar
+
+    def under_density(self, law, layer, density):
+        u = float(unit(self.s(), "double", "open"))
+        low, high = TABLES[law]["heights"][layer:layer + 2]
+        return low + u * (high - low) < density
+
+    def exponential(self):
+        passed = 0.0
+        while True:
+            word, x, accepted = self.trial("exponential")
+            layer = word & 255
+            if accepted:
+                return passed + x
+            if layer == 0:
+                self.branches.add("tail")
+                passed = passed + TABLES["exponential"]["tail"]
+            elif self.under_density("exponential", layer, exp(-x)):
+                self.branches.add("wedge")
+                return passed + x
+            else:
+                self.branches.add("wedge, rejected")
+
+    def normal(self):
+        while True:
+            word, x, accepted = self.trial("normal")
+            layer = word & 255
+            sign = -1.0 if word & 256 else 1.0
+            if accepted:
+                return sign * x
+            if layer == 0:
+                return sign * self.normal_tail()
+            if self.under_density("normal", layer, exp((x * x) * -0.5)):
+                self.branches.add("wedge")
+                return sign * x
+            self.branches.add("wedge, rejected")
+
+    def normal_tail(self):
+        r = TABLES["normal"]["tail"]
+        while True:
+            x = self.exponential() / r
+            y = self.exponential()
+            if y + y > x * x:
+                self.branches.add("tail")
+                return x + r
+            self.branches.add("tail, rejected")
+
+
+# ---- Vectors ----
+
 HEX = "%016x"
 
 PATHS = [
@@ -158,8 +312,112 @@ def stream_vectors():
     return rows
 
 
+FAILURES = (20261201, ["failures", 3, 4])
+
+
+def unit_vectors():
+    s = Stream.open(*FAILURES)
+    words = [0, M64, 1 << 63, (1 << 63) - 1, 1 << 12, (1 << 12) - 1, 1 << 11, (1 << 11) - 1,
+             M64 - (1 << 11), M64 - (1 << 12), 0x00000200FFFFFFFF, 0x000000FF00000000,
+             0xFFFFFEFFFFFFFFFF] + [s() for _ in range(20)]
+    rows = []
+    for word in words:
+        row = {"word": HEX % word}
+        for real in FORMATS:
+            drawn = word if real == "double" else word >> 32
+            row[real] = {ends: bits(unit(drawn, real, ends), real)
+                         for ends in ("open", "closed_open", "open_closed", "closed")}
+        rows.append(row)
+    return rows
+
+
+# lo, hi, whether a word is rejected on the way
+RANGES = [
+    (1, 6, False),
+    (0, 0, False),
+    (-5, 994, False),
+    (0, 2 ** 31, True),
+    (-(2 ** 31), 2 ** 31 - 1, False),
+    (0, 2 ** 32 - 2, False),
+    (0, 2 ** 32, False),
+    (0, 3 * 2 ** 62, True),
+    (-(2 ** 62), 2 ** 62, True),
+    (-(2 ** 63), 2 ** 63 - 1, False),
+    (2 ** 63, 2 ** 64 - 1, False),
+    (0, M64, False),
+    (0, M64 - 1, False),
+]
+
+
+def uniform_integer_vectors():
+    rows = []
+    for i, (lo, hi, rejects) in enumerate(RANGES):
+        path = ["integers", i]
+        s = Stream.open(20261201, path)
+        values = [lo + offset(hi - lo, s) for _ in range(12)]
+        assert (s.position > 12) == rejects
+        rows.append({"seed": 20261201, "path": path, "lo": lo, "hi": hi, "values": values,
+                     "position": s.position})
+    return rows
+
+
+def below_vectors():
+    rows = []
+    for n in (1, 2, 6, 100, 2 ** 31 + 1, 2 ** 32, 2 ** 32 + 1, 2 ** 63 + 1, M64):
+        path = ["below", n]
+        s = Stream.open(20261201, path)
+        values = [offset(n - 1, s) for _ in range(8)]
+        rows.append({"seed": 20261201, "path": path, "n": n, "values": values,
+                     "position": s.position})
+    return rows
+
+
+# The law's parameters, the word to begin at, how many draws, and the branches they reach.
+EXPONENTIAL = [
+    ({"rate": 1.0}, 0, 20, []),
+    ({"rate": 1.0}, 123, 1, ["wedge, rejected"]),
+    ({"rate": 1.0}, 270, 1, ["wedge"]),
+    ({"rate": 0.3}, 1400, 4, ["tail"]),
+    ({"rate": 1e-9}, 21967, 3, ["wedge", "wedge, rejected"]),
+    ({"rate": 1e6}, 24690, 3, ["tail", "wedge"]),
+]
+NORMAL = [
+    ({"mean": 0.0, "sd": 1.0}, 0, 20, []),
+    ({"mean": 0.0, "sd": 1.0}, 123, 1, ["wedge"]),
+    ({"mean": 0.0, "sd": 1.0}, 445, 1, ["wedge, rejected"]),
+    ({"mean": 0.0, "sd": 1.0}, 2133, 1, ["tail"]),
+    ({"mean": -3.7, "sd": 12.1}, 2701, 4, ["tail"]),
+    ({"mean": 1e9, "sd": 0.001}, 21967, 3, ["wedge", "wedge, rejected"]),
+    ({"mean": 10.0, "sd": 1e-3}, 24690, 2, ["tail", "wedge"]),
+    ({"mean": 0.0, "sd": 7.0}, 60377, 2, ["tail", "tail, rejected"]),
+]
+
+
+def law_vectors(cases, draw):
+    rows = []
+    for parameters, start, count, reached in cases:
+        path = ["laws", 1]
+        s = Stream.open(20261201, path)
+        s.position = start
+        law = Law(s)
+        values = [bits(draw(law, parameters)) for _ in range(count)]
+        assert sorted(law.branches) == reached, (parameters, start, sorted(law.branches))
+        row = {"seed": 20261201, "path": path, "word": start, "values": values,
+               "position": s.position, "branches": reached}
+        row.update(parameters)
+        rows.append(row)
+    return rows
+
+
 def computed():
-    return {"streams": stream_vectors()}
+    return {
+        "streams": stream_vectors(),
+        "unit": unit_vectors(),
+        "uniform_integer": uniform_integer_vectors(),
+        "below": below_vectors(),
+        "exponential": law_vectors(EXPONENTIAL, lambda law, p: law.exponential() / p["rate"]),
+        "normal": law_vectors(NORMAL, lambda law, p: p["mean"] + p["sd"] * law.normal()),
+    }
 
 
 def as_json(x):
@@ -168,7 +426,7 @@ def as_json(x):
 
 
 def main():
-    path = os.path.join(os.path.dirname(os.path.abspath(__file__)), "..", "golden", "vectors.json")
+    path = os.path.join(GOLDEN, "vectors.json")
     if sys.argv[1:] == ["--write"]:
         with open(path, "w", encoding="ascii") as f:
             f.write(as_json(computed()))
