@@ -19,6 +19,8 @@
 #include <fstream>
 #include <iostream>
 
+#include <leat/self_check.hpp>
+
 #include "availability_picture.hpp"
 #include "farm.hpp"
 #include "input_file.hpp"
@@ -87,9 +89,9 @@ std::vector<replication_row> run_all(const input& in, const farm& place, const l
 }
 
 void run_only(const loaded_input& in, const farm& place, const leat::source& study, int replication,
-              const std::string& folder) {
+              const std::string& folder, const leat::self_check_report& build) {
     const replication_row row = run_replication(in.values, place, study, replication);
-    write(folder, "results.json", results(in, row));
+    write(folder, "results.json", results(in, build, row));
     write(folder, "replay.json", replay(in.values, place, study, replication));
     std::cout << row_table(in.values, row) << "\nIts row of results.json:\n"
               << row_text(in.values, row) << "\n\nWritten: results.json and replay.json in "
@@ -97,18 +99,19 @@ void run_only(const loaded_input& in, const farm& place, const leat::source& stu
 }
 
 void run_study(const options& chosen) {
+    const leat::self_check_report build = leat::self_check_or_throw(); // before anything is drawn
     const loaded_input loaded = chosen_input(chosen);
     const input& in = loaded.values;
     const leat::source study = root_of(in);
     const farm place = build_farm(in, study);
     make_folder(chosen.output_folder);
     if (chosen.only) {
-        run_only(loaded, place, study, *chosen.only, chosen.output_folder);
+        run_only(loaded, place, study, *chosen.only, chosen.output_folder, build);
         return;
     }
     const std::vector<replication_row> rows = run_all(in, place, study, chosen.threads);
     const study_summary summary = summarise(rows);
-    write(chosen.output_folder, "results.json", results(loaded, rows, summary));
+    write(chosen.output_folder, "results.json", results(loaded, build, rows, summary));
     write(chosen.output_folder, "map.svg", map_picture(in, place));
     write(chosen.output_folder, "availability.svg", availability_picture(in, rows, summary));
     std::cout << table(in, summary) << "\nWritten: results.json, map.svg and availability.svg in "

@@ -58,10 +58,12 @@ json to_json(const input& in, const study_summary& summary) {
           {"times_as_narrow", std::isfinite(times) ? json(rounded(times, 6)) : json(nullptr)}}}};
 }
 
-json provenance(const loaded_input& in) {
+// Only whether it passed: the notes of a self-check depend on the machine.
+json provenance(const loaded_input& in, const leat::self_check_report& build) {
     return {{"program", "leat_skerry_bank"},
             {"notice", notice},
             {"leat_version", leat::version},
+            {"self_check", build ? "passed" : "failed"},
             {"engine", "philox4x32, a stream for each path"},
             {"seed", in.document.at("seed")},
             {"replications", in.values.replications},
@@ -70,9 +72,9 @@ json provenance(const loaded_input& in) {
 
 } // namespace
 
-std::string results(const loaded_input& in, const std::vector<replication_row>& rows,
-                    const study_summary& summary) {
-    json document = provenance(in);
+std::string results(const loaded_input& in, const leat::self_check_report& build,
+                    const std::vector<replication_row>& rows, const study_summary& summary) {
+    json document = provenance(in, build);
     document["summary"] = to_json(in.values, summary);
     document["rows"] = json::array();
     for (const replication_row& row : rows) {
@@ -81,8 +83,9 @@ std::string results(const loaded_input& in, const std::vector<replication_row>& 
     return spread_out(document, {"rows"});
 }
 
-std::string results(const loaded_input& in, const replication_row& row) {
-    json document = provenance(in);
+std::string results(const loaded_input& in, const leat::self_check_report& build,
+                    const replication_row& row) {
+    json document = provenance(in, build);
     document["only"] = row.replication;
     document["rows"] = json::array({to_json(in.values, row)});
     return spread_out(document, {"rows"});
