@@ -33,7 +33,7 @@ namespace leat {
 
 /// Checks and reports. Throws nothing.
 // Not inlined: else a change of the rounding mode might slip past its arithmetic.
-[[nodiscard, gnu::noinline]] inline self_check_report self_check() {
+[[nodiscard, gnu::noinline]] inline self_check_report self_check() noexcept {
     self_check_report report;
     detail::check_arithmetic(report);
     detail::check_golden(report);
