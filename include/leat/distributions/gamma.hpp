@@ -100,8 +100,9 @@ public:
             const real square = z * z;
             const std::uint64_t word = word64(g);
             const real u = open_unit(word);
+            const real three_d = into_positive<double>((real(3.0) * d).value); // never infinite
             if (u < real(1.0) - square * square * 0.0331 ||
-                real(natural_log(u.value)) < real(3.0) * d * log_beyond_cube(t.value)) {
+                real(natural_log(u.value)) < three_d * log_beyond_cube(t.value)) {
                 return (root * root * root).value;
             }
         }
