@@ -147,6 +147,26 @@ template <class Value>
     raise<invalid_parameter>(m.value(value).text(", ").text(allowed));
 }
 
+/// Refuses one entry of a list: "leat::NAME: PARAMETER[INDEX] = VALUE, ALLOWED".
+[[noreturn, gnu::cold, gnu::noinline]] inline void refuse_entry(const char* name,
+                                                                const char* parameter,
+                                                                std::uint64_t index, double value,
+                                                                const char* allowed) {
+    message m;
+    m.text("leat::").text(name).text(": ").text(parameter).text("[").value(index).text("] = ");
+    raise<invalid_parameter>(m.value(value).text(", ").text(allowed));
+}
+
+/// Refuses one entry of a matrix: "leat::NAME: PARAMETER[ROW][COLUMN] = VALUE, ALLOWED".
+[[noreturn, gnu::cold, gnu::noinline]] inline void
+refuse_entry(const char* name, const char* parameter, std::uint64_t row, std::uint64_t column,
+             double value, const char* allowed) {
+    message m;
+    m.text("leat::").text(name).text(": ").text(parameter).text("[").value(row).text("][");
+    m.value(column).text("] = ");
+    raise<invalid_parameter>(m.value(value).text(", ").text(allowed));
+}
+
 /// Refuses for a reason that is not one parameter's value: "leat::NAME: REASON".
 [[noreturn, gnu::cold, gnu::noinline]] inline void refuse(const char* name, const char* reason) {
     message m;

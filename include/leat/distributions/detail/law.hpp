@@ -29,9 +29,12 @@ concept number = std::is_arithmetic_v<T> && !std::same_as<T, bool>;
 
 /// What is wrong with a law's parameters: nothing, where `parameter` is null.
 struct fault {
+    static constexpr std::uint64_t no_entry = std::numeric_limits<std::uint64_t>::max();
+
     const char* parameter = nullptr;
     double value = 0;
     const char* allowed = nullptr;
+    std::uint64_t entry = no_entry; // which one, where the parameter is a list
 };
 
 /// True for neither infinite nor NaN.
@@ -57,10 +60,23 @@ constexpr fault unless_non_negative(const char* parameter, double x) noexcept {
 /// The first of two faults.
 constexpr fault first_of(fault a, fault b) noexcept { return a.parameter != nullptr ? a : b; }
 
-/// Writes a field of a law's parameters: reals as the hex digits of their bits.
+/// A parameter that is a list of numbers.
+template <class Field>
+concept list_field = requires(Field& x) {
+    x.push_back(x[0]);
+};
+
+/// Writes a field of a law's parameters: reals as the hex digits of their bits, a list as its
+/// length and then its entries.
 template <class Char, class Traits, class Field>
-void write_field(std::basic_ostream<Char, Traits>& os, Field x) {
-    if constexpr (std::floating_point<Field>) {
+void write_field(std::basic_ostream<Char, Traits>& os, const Field& x) {
+    if constexpr (list_field<Field>) {
+        write_unsigned(os, x.size());
+        for (const auto& entry : x) {
+            write_char(os, ' ');
+            write_field(os, entry);
+        }
+    } else if constexpr (std::floating_point<Field>) {
         write_real(os, static_cast<double>(x));
     } else {
         write_unsigned(os, static_cast<std::uint64_t>(x));
@@ -70,7 +86,17 @@ void write_field(std::basic_ostream<Char, Traits>& os, Field x) {
 /// Reads a field, or sets failbit: also where a float's text holds more than a float.
 template <class Char, class Traits, class Field>
 void read_field(std::basic_istream<Char, Traits>& is, Field& x) {
-    if constexpr (std::floating_point<Field>) {
+    if constexpr (list_field<Field>) {
+        x.clear();
+        std::uint64_t left = 0;
+        // One by one: a false length must not ask for memory.
+        for (read_unsigned(is, std::numeric_limits<std::uint64_t>::max(), left);
+             left > 0 && !is.fail(); --left) {
+            typename Field::value_type entry{};
+            read_field(is, entry);
+            x.push_back(entry);
+        }
+    } else if constexpr (std::floating_point<Field>) {
         double wide = 0;
         if (read_real(is, wide)) {
             // A value out of the type's range would be undefined to convert.
@@ -150,6 +176,10 @@ protected:
     constexpr explicit law(const param_type& p) : parameters_(p) {
         const fault found = p.fault();
         if (found.parameter != nullptr) {
+            if (found.entry != fault::no_entry) {
+                refuse_entry(Parameters::law_name, found.parameter, found.entry, found.value,
+                             found.allowed);
+            }
             refuse(Parameters::law_name, found.parameter, found.value, found.allowed);
         }
     }
