@@ -141,8 +141,9 @@ public:
         const std::uint64_t last = n > 2 ? n - 1 : 1; // two columns at least, or a shift is too far
         const int bits = 64 - std::countl_zero(last);
         rest_bits_ = digits - bits;
-        columns_.resize(std::size_t{1} << bits);
-        std::vector<Word> words(n);
+        // With a value: without, not all compilers take it in constant evaluation.
+        columns_ = std::vector<Word>(std::size_t{1} << bits, Word{0});
+        std::vector<Word> words(n, Word{0});
         std::size_t owner = n;
         count_words(weights, words, owner);
         for (std::size_t j = 0; j < columns_.size(); ++j) {
@@ -165,7 +166,7 @@ public:
 
     /// For fills: out[i] = at(words[i]), for as many as there are words.
     template <class Int>
-    constexpr void look_up(std::span<const Word> words, Int* out) const noexcept {
+    constexpr void at_each(std::span<const Word> words, Int* out) const noexcept {
         const Word* const columns = columns_.data(); // locals, which `out` cannot alias
         const int rest_bits = rest_bits_;
         for (std::size_t i = 0; i < words.size(); ++i) {
