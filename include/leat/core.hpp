@@ -3,6 +3,7 @@
 #ifndef LEAT_CORE_HPP
 #define LEAT_CORE_HPP
 
+#include "leat/core/arctangent.hpp"
 #include "leat/core/barrier.hpp"
 #include "leat/core/concepts.hpp"
 #include "leat/core/congruential.hpp"

@@ -3,10 +3,18 @@
 #ifndef LEAT_DISTRIBUTIONS_HPP
 #define LEAT_DISTRIBUTIONS_HPP
 
+#include "leat/distributions/beta.hpp"
+#include "leat/distributions/chi_squared.hpp"
+#include "leat/distributions/erlang.hpp"
 #include "leat/distributions/exponential.hpp"
+#include "leat/distributions/fisher_f.hpp"
 #include "leat/distributions/gamma.hpp"
+#include "leat/distributions/inverse_gaussian.hpp"
 #include "leat/distributions/lognormal.hpp"
 #include "leat/distributions/normal.hpp"
+#include "leat/distributions/student_t.hpp"
+#include "leat/distributions/truncated_normal.hpp"
+#include "leat/distributions/von_mises.hpp"
 #include "leat/distributions/weibull.hpp"
 
 #endif

@@ -1,6 +1,7 @@
 // Digests of the portable maths below the laws: a difference there shows here first.
 
 #include "digest/digest.hpp"
+#include "leat/core/arctangent.hpp"
 #include "leat/core/exponential.hpp"
 #include "leat/core/log_gamma.hpp"
 #include "leat/core/logarithm.hpp"
@@ -46,6 +47,7 @@ void maths() {
         const m::sine_and_cosine point = m::sine_cosine(x);
         return std::array<double, 2>{point.sine, point.cosine};
     });
+    over("maths.arctangent", 0, 5, [](double x) { return m::arctangent(x, 2); });
     over_all_sizes("maths.square_root", [](double x) { return m::square_root(x); });
     over("maths.log_gamma", 0.1, 100, [](double x) { return m::log_gamma(x); });
 }

@@ -52,12 +52,24 @@ void each_uniform_sampler(Visit visit) {
 /// Calls visit(name, sampler) for each of distributions/.
 template <class Visit>
 void each_law(Visit visit) {
+    visit("beta by exponentials", leat::beta{0.3, 0.4});
+    visit("beta by gammas", leat::beta{2, 3});
+    visit("chi_squared", leat::chi_squared{5});
+    visit("chi_squared of 1", leat::chi_squared{1});
+    visit("erlang", leat::erlang{2, 0.5});
     visit("exponential", leat::exponential{0.25});
+    visit("fisher_f", leat::fisher_f{0.7, 9});
     visit("gamma", leat::gamma{2.5, 3});
     visit("gamma of small shape", leat::gamma{0.3, 2});
+    visit("inverse_gaussian", leat::inverse_gaussian{3, 0.5});
     visit("lognormal", leat::lognormal{2, 0.3});
     visit("normal", leat::normal{-3, 0.5});
     visit("normal that is constant", leat::normal{2, 0});
+    visit("student_t", leat::student_t{4.5});
+    visit("truncated_normal, far", leat::truncated_normal{0, 1, 3, 9});
+    visit("truncated_normal, narrow", leat::truncated_normal{0, 1, -0.5, 0.5});
+    visit("truncated_normal, wide", leat::truncated_normal{0, 1, -0.5, 4});
+    visit("von_mises", leat::von_mises{2, 3});
     visit("weibull", leat::weibull{1.5, 8});
     visit("float exponential", leat::exponential<float>{3});
     visit("float gamma", leat::gamma<float>{40, 0.5});
