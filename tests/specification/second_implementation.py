@@ -120,6 +120,22 @@ class Stream:
 FORMATS = {"double": (53, "<d", "<Q", "%016x"), "float": (24, "<f", "<I", "%08x")}
 
 
+def drawn_bits(width, values, digit):
+    """word64 or word32 from an engine of `values` values; digit() is a word less the smallest."""
+    n = 1
+    if values & (values - 1) == 0:
+        while values ** n < 2 ** width:
+            n += 1
+        row = sum(digit() * values ** i for i in range(n))
+        return row * 2 ** width // values ** n
+    while 8 * (values ** n % 2 ** width) > values ** n:
+        n += 1
+    while True:
+        row = sum(digit() * values ** i for i in range(n))
+        if row < values ** n - values ** n % 2 ** width:
+            return row % 2 ** width
+
+
 def nearest(x, digits):
     """The fraction x >= 0 rounded to that many binary digits, ties to even, exactly."""
     if x == 0:
@@ -315,6 +331,26 @@ def stream_vectors():
 FAILURES = (20261201, ["failures", 3, 4])
 
 
+# Number of values, and the smallest. Of 57 values a tenth of the rows is rejected.
+ENGINES = [(6, 1), (57, 3), (2, 0), (256, 0), (2 ** 31 - 2, 1), (2 ** 32, 0), (2 ** 32 - 1, 1),
+           (2 ** 64 - 1, 1)]
+
+
+def word_vectors():
+    """Words of engines that return `smallest` plus words of a stream modulo their range."""
+    rows = []
+    for values, smallest in ENGINES:
+        s = Stream.open(20261201, ["digits", values])
+        row = {"seed": 20261201, "path": ["digits", values], "values": values, "smallest": smallest,
+               "word64": [], "word32": []}
+        for _ in range(12):
+            row["word64"].append(HEX % drawn_bits(64, values, lambda: s() % values))
+            row["word32"].append(HEX % drawn_bits(32, values, lambda: s() % values))
+        row["position"] = s.position
+        rows.append(row)
+    return rows
+
+
 def unit_vectors():
     s = Stream.open(*FAILURES)
     words = [0, M64, 1 << 63, (1 << 63) - 1, 1 << 12, (1 << 12) - 1, 1 << 11, (1 << 11) - 1,
@@ -412,6 +448,7 @@ def law_vectors(cases, draw):
 def computed():
     return {
         "streams": stream_vectors(),
+        "words": word_vectors(),
         "unit": unit_vectors(),
         "uniform_integer": uniform_integer_vectors(),
         "below": below_vectors(),

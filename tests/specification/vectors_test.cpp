@@ -8,12 +8,13 @@
 #include "leat/testing/engines.hpp"
 #include "leat/uniform/uniform_integer.hpp"
 #include "leat/uniform/unit.hpp"
+#include "leat/uniform/words.hpp"
 
 #include <gtest/gtest.h>
 #include <nlohmann/json.hpp>
 
-#include <algorithm>
 #include <bit>
+#include <cstddef>
 #include <cstdint>
 #include <fstream>
 #include <set>
@@ -38,6 +39,44 @@ leat::stream stream_of(const json& row) {
     const json& path = row.at("path");
     return leat::source(row.at("seed").get<std::uint64_t>())
         .stream(path.at(0).get<std::string>(), path.at(1).get<std::uint64_t>());
+}
+
+/// An engine of `Values` values from `Smallest` on, made of a stream's words.
+template <std::uint64_t Values, std::uint64_t Smallest>
+struct ranged {
+    using result_type = std::uint64_t;
+    static constexpr result_type min() { return Smallest; }
+    static constexpr result_type max() { return Smallest + (Values - 1); }
+    result_type operator()() { return Smallest + words() % Values; }
+
+    leat::stream words;
+};
+
+template <std::uint64_t Values, std::uint64_t Smallest>
+void check_words(const json& row) {
+    SCOPED_TRACE(row.dump());
+    ASSERT_EQ(row.at("values"), Values);
+    ASSERT_EQ(row.at("smallest"), Smallest);
+    ranged<Values, Smallest> g{stream_of(row)};
+    ASSERT_EQ(row.at("word64").size(), row.at("word32").size());
+    for (std::size_t i = 0; i < row.at("word64").size(); ++i) {
+        EXPECT_EQ(leat::word64(g), from_hex(row.at("word64").at(i)));
+        EXPECT_EQ(leat::word32(g), from_hex(row.at("word32").at(i)));
+    }
+    EXPECT_EQ(g.words.position(), row.at("position"));
+}
+
+TEST(Vectors, WordsOfEnginesOfAnyRange) {
+    const json rows = section("words");
+    ASSERT_EQ(rows.size(), 8u);
+    check_words<6, 1>(rows.at(0));
+    check_words<57, 3>(rows.at(1)); // rejects
+    check_words<2, 0>(rows.at(2));
+    check_words<256, 0>(rows.at(3));
+    check_words<2147483646, 1>(rows.at(4));
+    check_words<4294967296, 0>(rows.at(5));
+    check_words<4294967295, 1>(rows.at(6));
+    check_words<18446744073709551615u, 1>(rows.at(7));
 }
 
 template <ends Ends>
