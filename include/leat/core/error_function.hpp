@@ -15,6 +15,7 @@
 #include "leat/core/error_free.hpp"
 #include "leat/core/exponential.hpp"
 #include "leat/core/polynomial.hpp"
+#include "leat/core/scaled.hpp"
 
 namespace leat::detail {
 
@@ -66,6 +67,13 @@ constexpr double erfc_scaled(double y) noexcept {
     return ((real(root) - rest) * inverse).value;
 }
 
+/// exp(-x^2 / 2), for |x| < 2^400.
+constexpr scaled standard_bell(double x) noexcept {
+    const double size = magnitude(x) < 0x1p-400 ? 0.0 : magnitude(x);
+    const two_part square = two_product(size, size);
+    return exp_scaled(-0.5 * square.high, -0.5 * square.low);
+}
+
 /// P(Z < x) of a standard normal Z.
 constexpr double normal_below(double x) noexcept {
     using real = strict<double>;
@@ -79,8 +87,7 @@ constexpr double normal_below(double x) noexcept {
         const real half = real(0.5) * erf_of_small(y);
         return (x < 0 ? real(0.5) - half : real(0.5) + half).value;
     }
-    const two_part square = two_product(size, size);
-    const double power = exp_scaled(-0.5 * square.high, -0.5 * square.low).value();
+    const double power = standard_bell(x).value();
     const real tail = real(0.5) * power * erfc_scaled(y);
     return (x < 0 ? tail : real(1.0) - tail).value;
 }

@@ -15,7 +15,10 @@
 #include "leat/core/barrier.hpp"
 #include "leat/core/concepts.hpp"
 #include "leat/core/errors.hpp"
+#include "leat/core/exponential.hpp"
+#include "leat/core/logarithm.hpp"
 #include "leat/core/scaled.hpp"
+#include "leat/distributions/detail/evaluate.hpp"
 #include "leat/distributions/detail/into_range.hpp"
 #include "leat/distributions/detail/law.hpp"
 #include "leat/distributions/detail/ziggurat.hpp"
@@ -97,7 +100,30 @@ public:
     [[nodiscard]] static constexpr Real min() noexcept { return std::numeric_limits<Real>::min(); }
     [[nodiscard]] static constexpr Real max() noexcept { return std::numeric_limits<Real>::max(); }
 
+    /// The probability density at x.
+    [[nodiscard]] constexpr double density(double x) const {
+        const auto rate_ = static_cast<double>(rate());
+        return in_support(x) ? detail::or_zero(detail::split(rate_) *
+                                               detail::exp_scaled(-detail::product(rate_, x)))
+                             : 0;
+    }
+    /// P(X <= x).
+    [[nodiscard]] constexpr double cumulative(double x) const {
+        if (!in_support(x)) {
+            return x > 0 ? 1 : 0;
+        }
+        return -detail::exp_minus_one(-detail::product(static_cast<double>(rate()), x));
+    }
+    /// The x with cumulative(x) = p, 0 < p < 1.
+    [[nodiscard]] constexpr double quantile(double p) const {
+        const double chance = detail::chance_or_refuse(param_type::law_name, p);
+        return detail::quotient(-detail::log_one_plus(-chance), static_cast<double>(rate()));
+    }
+
 private:
+    constexpr bool in_support(double x) const {
+        return detail::number_or_refuse(param_type::law_name, x) > 0 && detail::finite(x);
+    }
     [[gnu::always_inline]] constexpr Real from_standard(double e) const noexcept {
         return detail::into_positive<Real>(detail::held(e / static_cast<double>(rate())));
     }

@@ -14,11 +14,14 @@
 
 #include "leat/core/barrier.hpp"
 #include "leat/core/concepts.hpp"
+#include "leat/core/error_function.hpp"
 #include "leat/core/errors.hpp"
 #include "leat/core/exponential.hpp"
 #include "leat/core/logarithm.hpp"
+#include "leat/core/normal_quantile.hpp"
 #include "leat/core/scaled.hpp"
 #include "leat/core/square_root.hpp"
+#include "leat/distributions/detail/evaluate.hpp"
 #include "leat/distributions/detail/into_range.hpp"
 #include "leat/distributions/detail/law.hpp"
 #include "leat/distributions/detail/ziggurat.hpp"
@@ -103,7 +106,45 @@ public:
     [[nodiscard]] static constexpr Real min() noexcept { return std::numeric_limits<Real>::min(); }
     [[nodiscard]] static constexpr Real max() noexcept { return std::numeric_limits<Real>::max(); }
 
+    /// The probability density at x; of log_sd 0 the largest finite number at the one value.
+    [[nodiscard]] constexpr double density(double x) const {
+        if (!in_support(x)) {
+            return 0;
+        }
+        if (sigma() == 0) {
+            return x == detail::natural_exp(mu()) ? std::numeric_limits<double>::max() : 0.0;
+        }
+        const double z = standard_place(x);
+        if (!(detail::magnitude(z) < 0x1p300)) {
+            return 0;
+        }
+        constexpr detail::scaled root{0x1.9884533d43651p-2, 0}; // 1 / sqrt(2 pi)
+        return detail::or_zero(root * detail::standard_bell(z) *
+                               detail::inverse(detail::split(sigma()) * detail::split(x)));
+    }
+    /// P(X <= x).
+    [[nodiscard]] constexpr double cumulative(double x) const {
+        if (!in_support(x)) {
+            return x > 0 ? 1 : 0;
+        }
+        if (sigma() == 0) {
+            return x < detail::natural_exp(mu()) ? 0 : 1;
+        }
+        return detail::normal_below(standard_place(x));
+    }
+    /// The x with cumulative(x) = p, 0 < p < 1.
+    [[nodiscard]] constexpr double quantile(double p) const {
+        const double z = detail::normal_quantile(detail::chance_or_refuse(param_type::law_name, p));
+        return detail::natural_exp((real(mu()) + real(sigma()) * z).value);
+    }
+
 private:
+    constexpr bool in_support(double x) const {
+        return detail::number_or_refuse(param_type::law_name, x) > 0 && detail::finite(x);
+    }
+    constexpr double standard_place(double x) const noexcept {
+        return detail::standardised(detail::natural_log(x), mu(), sigma());
+    }
     constexpr double mu() const noexcept { return static_cast<double>(log_mean()); }
     constexpr double sigma() const noexcept { return static_cast<double>(log_sd()); }
     constexpr detail::scaled scaled_mean() const noexcept {

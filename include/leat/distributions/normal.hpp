@@ -16,7 +16,12 @@
 
 #include "leat/core/barrier.hpp"
 #include "leat/core/concepts.hpp"
+#include "leat/core/error_free.hpp" // two_product
+#include "leat/core/error_function.hpp"
+#include "leat/core/exponential.hpp"
+#include "leat/core/normal_quantile.hpp"
 #include "leat/core/scaled.hpp"
+#include "leat/distributions/detail/evaluate.hpp"
 #include "leat/distributions/detail/into_range.hpp"
 #include "leat/distributions/detail/law.hpp"
 #include "leat/distributions/detail/ziggurat.hpp"
@@ -96,11 +101,44 @@ public:
     }
     [[nodiscard]] static constexpr Real max() noexcept { return std::numeric_limits<Real>::max(); }
 
+    /// The probability density at x; of sd 0 the largest finite number at the mean.
+    [[nodiscard]] constexpr double density(double x) const {
+        if (sd() == 0) {
+            return detail::number_or_refuse(param_type::law_name, x) == mean_()
+                       ? std::numeric_limits<double>::max()
+                       : 0.0;
+        }
+        const double z = standard_place(x);
+        if (!(detail::magnitude(z) < 0x1p300)) {
+            return 0;
+        }
+        constexpr detail::scaled root{0x1.9884533d43651p-2, 0}; // 1 / sqrt(2 pi)
+        return detail::or_zero(root * detail::standard_bell(z) *
+                               detail::inverse(detail::split(sd_())));
+    }
+    /// P(X <= x).
+    [[nodiscard]] constexpr double cumulative(double x) const {
+        if (sd() == 0) {
+            return detail::number_or_refuse(param_type::law_name, x) < mean_() ? 0 : 1;
+        }
+        return detail::normal_below(standard_place(x));
+    }
+    /// The x with cumulative(x) = p, 0 < p < 1.
+    [[nodiscard]] constexpr double quantile(double p) const {
+        using real = detail::strict<double>;
+        const double z = detail::normal_quantile(detail::chance_or_refuse(param_type::law_name, p));
+        return sd() == 0 ? mean_() : detail::kept_normal((real(mean_()) + real(sd_()) * z).value);
+    }
+
 private:
     [[gnu::always_inline]] constexpr Real from_standard(double z) const noexcept {
         using real = detail::strict<double>;
         const double x = (real(mean_()) + real(sd_()) * z).value;
         return sd() == 0 ? this->param().mean : detail::into_signed<Real>(x);
+    }
+    constexpr double standard_place(double x) const {
+        return detail::standardised(detail::number_or_refuse(param_type::law_name, x), mean_(),
+                                    sd_());
     }
     constexpr double mean_() const noexcept { return static_cast<double>(this->param().mean); }
     constexpr double sd_() const noexcept { return static_cast<double>(this->param().sd); }

@@ -17,8 +17,10 @@
 #include "leat/core/concepts.hpp"
 #include "leat/core/exponential.hpp"
 #include "leat/core/log_gamma.hpp" // the moments
+#include "leat/core/logarithm.hpp"
 #include "leat/core/power.hpp"
 #include "leat/core/scaled.hpp"
+#include "leat/distributions/detail/evaluate.hpp"
 #include "leat/distributions/detail/into_range.hpp"
 #include "leat/distributions/detail/law.hpp"
 #include "leat/distributions/detail/ziggurat.hpp"
@@ -89,7 +91,45 @@ public:
     [[nodiscard]] static constexpr Real min() noexcept { return std::numeric_limits<Real>::min(); }
     [[nodiscard]] static constexpr Real max() noexcept { return std::numeric_limits<Real>::max(); }
 
+    /// The probability density at x.
+    [[nodiscard]] constexpr double density(double x) const {
+        if (!in_support(x)) {
+            return 0;
+        }
+        const double log = log_of_ratio(x);
+        const auto k = static_cast<double>(shape());
+        const double log_hazard = detail::held(k * log);
+        return detail::or_zero(
+            detail::exp_scaled(
+                (detail::strict<double>(log_hazard) - detail::natural_exp(log_hazard)).value) *
+            detail::split(k) * detail::inverse(detail::split(x)));
+    }
+    /// P(X <= x).
+    [[nodiscard]] constexpr double cumulative(double x) const {
+        if (!in_support(x)) {
+            return x > 0 ? 1 : 0;
+        }
+        const double log_hazard = detail::held(static_cast<double>(shape()) * log_of_ratio(x));
+        return -detail::exp_minus_one(-detail::natural_exp(log_hazard));
+    }
+    /// The x with cumulative(x) = p, 0 < p < 1.
+    [[nodiscard]] constexpr double quantile(double p) const {
+        const double chance = detail::chance_or_refuse(param_type::law_name, p);
+        const double hazard = -detail::log_one_plus(-chance);
+        return (scale_ * detail::power_scaled(hazard, inverse_shape_)).value();
+    }
+
 private:
+    constexpr bool in_support(double x) const {
+        return detail::number_or_refuse(param_type::law_name, x) > 0 && detail::finite(x);
+    }
+    /// ln(x / scale).
+    constexpr double log_of_ratio(double x) const noexcept {
+        const detail::scaled ratio = detail::split(x) * detail::inverse(scale_);
+        const detail::strict<double> whole = static_cast<double>(ratio.exponent);
+        constexpr double log_two = 0x1.62e42fefa39efp-1;
+        return (whole * log_two + detail::natural_log(ratio.factor)).value;
+    }
     constexpr detail::scaled scaled_mean() const noexcept {
         return scale_ * detail::exp_scaled(detail::log_gamma(detail::held(1.0 + inverse_shape_)));
     }

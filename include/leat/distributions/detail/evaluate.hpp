@@ -11,6 +11,7 @@
 #include "leat/core/barrier.hpp"
 #include "leat/core/errors.hpp"
 #include "leat/core/scaled.hpp"
+#include "leat/distributions/detail/into_range.hpp"
 #include "leat/distributions/detail/law.hpp" // finite
 
 #include <bit>
@@ -54,6 +55,9 @@ constexpr double product(double a, double b) noexcept {
 constexpr double quotient(double a, double b) noexcept {
     return a == 0 ? 0.0 : (split(a) * inverse(split(b))).value();
 }
+
+/// A quantile, kept among the normal numbers as draws are; 0 stays 0.
+constexpr double kept_normal(double x) noexcept { return x == 0 ? x : into_signed<double>(x); }
 
 /// (x - location) / scale, also where the difference alone would overflow.
 constexpr double standardised(double x, double location, double scale) noexcept {
