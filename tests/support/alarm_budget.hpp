@@ -106,6 +106,7 @@ inline constexpr declared_checks alarm_budget[] = {
     {"CategoricalGoodness.Weights", 7},
     {"CategoricalGoodness.OneHeavyOutcomeAmongAMillion", 1},
     {"PlantedFaults.TextbookAliasInDoublePasses", 1},
+    {"WeightedIndexGoodness.BeforeAndAfterUpdates", 5},
     {"StreamStatistics.FirstWordsOfSeedsAreDistinct", 2}, // a chance of 1.2e-10
     {"StreamStatistics.FirstWordsOfSeedsAreBalanced", 65},
     {"StreamStatistics.FirstWordsOfNeighbouringSeedsAreUncorrelated", 80},
