@@ -29,6 +29,22 @@ using half_lanes [[gnu::vector_size(8 * LEAT_KERNEL_LANES)]] = std::uint32_t; //
     using signed_lanes [[gnu::vector_size(64)]] = long long;
     return reinterpret_cast<lanes>(__builtin_ia32_pmuludq512_mask(x, y, signed_lanes{}, 0xFF));
 #endif
+#elif defined(__aarch64__)
+    // NEON has no 64-bit product, only one of halves to full: with `*` the compilers take the
+    // vectors apart.
+    using narrow_lanes [[gnu::vector_size(8)]] = std::uint32_t;
+    const auto x = __builtin_convertvector(a, narrow_lanes);
+    const auto y = __builtin_convertvector(b, narrow_lanes);
+#if defined(__clang__)
+    using byte_lanes [[gnu::vector_size(8)]] = signed char;
+    constexpr int unsigned_halves = 51; // how clang numbers the type of the result
+    return reinterpret_cast<lanes>(__builtin_neon_vmull_v(
+        reinterpret_cast<byte_lanes>(x), reinterpret_cast<byte_lanes>(y), unsigned_halves));
+#elif __has_builtin(__builtin_aarch64_intrinsic_vec_umult_lo_v2si_uuu)
+    return __builtin_aarch64_intrinsic_vec_umult_lo_v2si_uuu(x, y);
+#else
+    return __builtin_convertvector(x, lanes) * __builtin_convertvector(y, lanes);
+#endif
 #else
     return (a & 0xFFFFFFFFu) * (b & 0xFFFFFFFFu);
 #endif
