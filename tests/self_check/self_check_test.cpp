@@ -206,8 +206,9 @@ TEST(SelfCheck, CoversWhateverTheDigestsCover) {
     int lines = 0;
     while (file >> kind >> name >> digest) {
         ++lines;
-        EXPECT_TRUE(covered.contains(thing(name)))
-            << thing(name) << " needs a line in include/leat/self_check/golden.hpp";
+        if (covered.insert(thing(name)).second) { // said once, however many lines it has
+            ADD_FAILURE() << thing(name) << " needs a line in include/leat/self_check/golden.hpp";
+        }
     }
     EXPECT_GE(lines, 100);
 }

@@ -218,18 +218,32 @@ inline void each_golden(golden_line line, void* context) {
         return uniform_integer<std::uint64_t>{9, (std::uint64_t{1} << 63) + 9};
     });
 
+    golden.sampler("beta.gammas", 0x6302904d01a4cd42u, [] { return beta{2.3, 3.1}; });
+    golden.sampler("beta.johnk", 0x779b54485f56e783u, [] { return beta{0.3, 0.4}; });
+    golden.sampler("chi_squared", 0x194f379cfefee310u, [] { return chi_squared{7.5}; });
+    golden.sampler("erlang", 0x15260dbfd8bc4c46u, [] { return erlang{3, 0.3}; });
     golden.sampler("exponential.double", 0x6d6dc9f5d9bbbfd1u, [] { return exponential{0.3}; });
     golden.sampler("exponential.float", 0x8844522bb5959887u,
                    [] { return exponential<float>{0.3f}; });
+    golden.sampler("fisher_f", 0xdd32a918adbf4eefu, [] { return fisher_f{5, 8}; });
     golden.sampler("gamma.shape_above_1", 0x5de4523e47232070u, [] { return gamma{2.7, 3}; });
     golden.sampler("gamma.shape_below_1", 0x3a141d0ab08ef176u, [] { return gamma{0.3, 3}; });
     golden.sampler("gamma.float", 0x5c01065bf7f59b2eu, [] { return gamma<float>{2.7f, 3.0f}; });
+    golden.sampler("inverse_gaussian", 0xafa685b102b10ee8u, [] { return inverse_gaussian{3, 7}; });
     golden.sampler("lognormal.double", 0xa8a6294738e7774bu, [] { return lognormal{0.5, 0.8}; });
     golden.sampler("lognormal.float", 0x2a2b79a4afcb17c5u, [] {
         return lognormal<float>{0.5f, 0.8f};
     });
     golden.sampler("normal.double", 0xed0ac9404c02ed76u, [] { return normal{-3.7, 12.1}; });
     golden.sampler("normal.float", 0x747c1469474ebd6cu, [] { return normal<float>{10, 3}; });
+    golden.sampler("student_t", 0x196f90568c9ebc3bu, [] { return student_t{4.5}; });
+    golden.sampler("truncated_normal.wide", 0xd734772e4ce12476u, [] {
+        return truncated_normal{1, 2, -0.5, 9};
+    });
+    golden.sampler("truncated_normal.far", 0x18d260c202d4bed6u, [] {
+        return truncated_normal{1, 2, 5, 9};
+    });
+    golden.sampler("von_mises", 0x971daea422a60d3du, [] { return von_mises{-2, 2.5}; });
     golden.sampler("weibull.double", 0x13efbf2f69acffa5u, [] { return weibull{2.3, 1500}; });
     golden.sampler("weibull.float", 0x912d4ba50b12fee9u, [] { return weibull<float>{1.5f, 2.0f}; });
 
