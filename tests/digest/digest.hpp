@@ -80,6 +80,7 @@ void uniform();
 void maths();
 void laws();
 void regions();
+void bulk();
 
 } // namespace digests
 

@@ -17,4 +17,5 @@ int main(int count, char** arguments) {
     digests::maths();
     digests::laws();
     digests::regions();
+    digests::bulk();
 }
