@@ -26,6 +26,8 @@
 #include "leat/core/errors.hpp"
 #include "leat/core/exponential.hpp"
 #include "leat/core/scaled.hpp"
+#include "leat/distributions/detail/beta_density.hpp"
+#include "leat/distributions/detail/evaluate.hpp"
 #include "leat/distributions/detail/into_range.hpp"
 #include "leat/distributions/detail/law.hpp"
 #include "leat/distributions/detail/unit_gamma.hpp"
@@ -130,6 +132,18 @@ public:
     [[nodiscard]] static constexpr Real min() noexcept { return std::numeric_limits<Real>::min(); }
     [[nodiscard]] static constexpr Real max() noexcept {
         return Real{1} - std::numeric_limits<Real>::epsilon() / Real{2};
+    }
+
+    /// The probability density at x. The cumulative chance and the quantile need the incomplete
+    /// beta function: distributions/with_boost_math.hpp has them.
+    [[nodiscard]] constexpr double density(double x) const {
+        if (!(detail::number_or_refuse(param_type::law_name, x) > 0) || !(x < 1)) {
+            return 0;
+        }
+        const double rest = (real(1.0) - x).value;
+        return detail::or_zero(detail::beta_kernel(a_(), b_(), x, rest) *
+                               detail::inverse(detail::split(x)) *
+                               detail::inverse(detail::split(rest)));
     }
 
 private:

@@ -16,9 +16,11 @@
 #include "leat/core/concepts.hpp"
 #include "leat/core/exponential.hpp"
 #include "leat/core/scaled.hpp"
+#include "leat/distributions/detail/evaluate.hpp"
 #include "leat/distributions/detail/into_range.hpp"
 #include "leat/distributions/detail/law.hpp"
 #include "leat/distributions/detail/unit_gamma.hpp"
+#include "leat/distributions/gamma.hpp"
 
 #include <limits>
 
@@ -88,6 +90,16 @@ public:
     }
     [[nodiscard]] static constexpr Real min() noexcept { return std::numeric_limits<Real>::min(); }
     [[nodiscard]] static constexpr Real max() noexcept { return std::numeric_limits<Real>::max(); }
+
+    /// The probability density at x. The cumulative chance and the quantile need the incomplete
+    /// gamma function: distributions/with_boost_math.hpp has them.
+    [[nodiscard]] constexpr double density(double x) const {
+        if (!(detail::number_or_refuse(param_type::law_name, x) > 0) || !detail::finite(x)) {
+            return 0;
+        }
+        const double half = (detail::split(mean()) * detail::scaled{1, -1}).value();
+        return detail::or_zero(detail::gamma_density(half, 2, x));
+    }
 
 private:
     detail::unit_gamma gamma_; // of shape k / 2

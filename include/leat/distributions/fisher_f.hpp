@@ -18,6 +18,8 @@
 #include "leat/core/concepts.hpp"
 #include "leat/core/exponential.hpp"
 #include "leat/core/scaled.hpp"
+#include "leat/distributions/detail/beta_density.hpp"
+#include "leat/distributions/detail/evaluate.hpp"
 #include "leat/distributions/detail/into_range.hpp"
 #include "leat/distributions/detail/law.hpp"
 #include "leat/distributions/detail/unit_gamma.hpp"
@@ -117,6 +119,23 @@ public:
     }
     [[nodiscard]] static constexpr Real min() noexcept { return std::numeric_limits<Real>::min(); }
     [[nodiscard]] static constexpr Real max() noexcept { return std::numeric_limits<Real>::max(); }
+
+    /// The probability density at x. The cumulative chance and the quantile need the incomplete
+    /// beta function: distributions/with_boost_math.hpp has them.
+    [[nodiscard]] constexpr double density(double x) const {
+        if (!(detail::number_or_refuse(param_type::law_name, x) > 0) || !detail::finite(x)) {
+            return 0;
+        }
+        const auto a = static_cast<double>(d1());
+        const auto b = static_cast<double>(d2());
+        const real odds = // d1 x / d2
+            (detail::split(a) * detail::split(x) * detail::inverse(detail::split(b))).value();
+        const real u = odds < 1.0 ? odds / (odds + 1.0) : real(1.0) / (real(1.0) / odds + 1.0);
+        const double v = detail::into_positive<double>((real(1.0) / (odds + 1.0)).value);
+        const detail::scaled kernel =
+            detail::beta_kernel((real(0.5) * a).value, (real(0.5) * b).value, u.value, v);
+        return detail::or_zero(kernel * detail::inverse(detail::split(x)));
+    }
 
 private:
     /// The units of the two variates, each over half its degrees: 1 where those are 2 or more.

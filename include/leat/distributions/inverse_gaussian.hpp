@@ -19,9 +19,13 @@
 
 #include "leat/core/barrier.hpp"
 #include "leat/core/concepts.hpp"
+#include "leat/core/error_free.hpp"
+#include "leat/core/error_function.hpp"
+#include "leat/core/exponential.hpp"
 #include "leat/core/logarithm.hpp"
 #include "leat/core/scaled.hpp"
 #include "leat/core/square_root.hpp"
+#include "leat/distributions/detail/evaluate.hpp"
 #include "leat/distributions/detail/into_range.hpp"
 #include "leat/distributions/detail/law.hpp"
 #include "leat/distributions/detail/ziggurat.hpp"
@@ -99,24 +103,81 @@ public:
     /// mean^3 / shape. It saturates at the ends of double's range.
     [[nodiscard]] constexpr double variance() const noexcept {
         const detail::scaled m = detail::split(mean());
-        return (m * m * over_shape(mean(), shape_())).value();
+        return (m * m * ratio_of(mean(), shape_())).value();
     }
     [[nodiscard]] static constexpr Real min() noexcept { return std::numeric_limits<Real>::min(); }
     [[nodiscard]] static constexpr Real max() noexcept { return std::numeric_limits<Real>::max(); }
+
+    /// The probability density at x.
+    [[nodiscard]] constexpr double density(double x) const {
+        if (!(detail::number_or_refuse(param_type::law_name, x) > 0) || !detail::finite(x)) {
+            return 0;
+        }
+        constexpr double root = 0x1.9884533d43651p-2; // 1 / sqrt(2 pi)
+        return detail::or_zero(root_of_shape_over(x) * detail::split(root) *
+                               detail::exp_scaled(-exponent_at(x)) *
+                               detail::inverse(detail::split(x)));
+    }
+    /// P(X <= x), in the form that cancels nowhere: both of its terms are multiples of the
+    /// density's exponential. (It has no quantile in closed form: with_boost_math.hpp.)
+    [[nodiscard]] constexpr double cumulative(double x) const {
+        if (!(detail::number_or_refuse(param_type::law_name, x) > 0)) {
+            return 0;
+        }
+        if (!detail::finite(x)) {
+            return 1;
+        }
+        constexpr double root_half = 0x1.6a09e667f3bcdp-1; // sqrt(1/2)
+        const detail::scaled root = root_of_shape_over(x) * detail::split(root_half);
+        const double away = detail::magnitude((real(x) - mean()).value);
+        const double near = away == 0 ? 0.0 : (root * over_mean(away)).value();
+        const real far =
+            (root * over_mean((real(x) * 0.5 + real(mean()) * 0.5).value) * detail::scaled{1, 1})
+                .value();
+        const detail::scaled power = detail::exp_scaled(-exponent_at(x)) * detail::scaled{1, -1};
+        const real first = detail::erfc_scaled(near);
+        const real second = detail::erfc_scaled(far.value);
+        const real tail = x < mean() ? first + second : first - second;
+        if (!(tail.value > 0)) {
+            return x < mean() ? 0.0 : 1.0;
+        }
+        const double chance = detail::or_zero(power * detail::split(tail.value));
+        return x < mean() ? chance : (real(1.0) - chance).value;
+    }
 
 private:
     static constexpr double widest = 0x1p400;
 
     constexpr double shape_() const noexcept { return static_cast<double>(shape()); }
 
-    static constexpr detail::scaled over_shape(double mean, double shape) noexcept {
-        const detail::scaled m = detail::split(mean);
-        const detail::scaled l = detail::split(shape);
-        return {detail::held(m.factor / l.factor), m.exponent - l.exponent};
+    static constexpr detail::scaled ratio_of(double x, double y) noexcept {
+        const detail::scaled top = detail::split(x);
+        const detail::scaled below = detail::split(y);
+        return {detail::held(top.factor / below.factor), top.exponent - below.exponent};
+    }
+    constexpr detail::scaled over_mean(double x) const noexcept {
+        return detail::split(x) * detail::inverse(detail::split(mean()));
+    }
+    /// sqrt(shape / x).
+    constexpr detail::scaled root_of_shape_over(double x) const noexcept {
+        detail::scaled square = ratio_of(shape_(), x);
+        if (square.exponent % 2 != 0) {
+            square = {detail::held(square.factor * 2.0), square.exponent - 1};
+        }
+        return {detail::square_root(square.factor), square.exponent / 2};
+    }
+    /// shape (x - mean)^2 / (2 mean^2 x).
+    constexpr double exponent_at(double x) const noexcept {
+        const double away = detail::magnitude((real(x) - mean()).value);
+        if (away == 0) {
+            return 0;
+        }
+        const detail::scaled places = root_of_shape_over(x) * over_mean(away);
+        return (places * places * detail::scaled{1, -1}).value();
     }
     /// mean / (2 shape); below 2^-400, where s always rounds to 1, given as that.
     static constexpr double spread_of(double mean, double shape) noexcept {
-        const double half = (over_shape(mean, shape) * detail::scaled{1, -1}).value();
+        const double half = (ratio_of(mean, shape) * detail::scaled{1, -1}).value();
         return half < 0x1p-400 ? 0x1p-400 : half;
     }
 

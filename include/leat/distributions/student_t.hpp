@@ -2,7 +2,8 @@
 // with k degrees; k need not be whole. k = 1 is the Cauchy law. Errors of estimated means, heavy
 // tails.
 //
-// Domain: k finite and > 0; anything else throws invalid_parameter. A draw consumes a normal, then
+// Domain: k finite and >= 1e-300 (below, the density leaves the range of double everywhere);
+// anything else throws invalid_parameter. A draw consumes a normal, then
 // X: on average 2.04 word64 for k = 1, 2.05 for 2, 3.2 at most from there on, 4.3 below 2 (k = 1
 // apart). Throws engine_stuck as `gamma` does. For small k the draws themselves pass the range of
 // double (half of them at k = 0.001): they are given as the largest finite number with their sign.
@@ -19,6 +20,8 @@
 #include "leat/core/exponential.hpp"
 #include "leat/core/scaled.hpp"
 #include "leat/core/square_root.hpp"
+#include "leat/distributions/detail/beta_density.hpp"
+#include "leat/distributions/detail/evaluate.hpp"
 #include "leat/distributions/detail/into_range.hpp"
 #include "leat/distributions/detail/law.hpp"
 #include "leat/distributions/detail/unit_gamma.hpp"
@@ -40,7 +43,10 @@ struct student_t_parameters {
 
     /// What is wrong with it, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {
-        return detail::unless_positive("k", static_cast<double>(k));
+        const auto degrees = static_cast<double>(k);
+        return detail::finite(degrees) && degrees >= 1e-300
+                   ? detail::fault{}
+                   : detail::fault{"k", degrees, "must be finite and >= 1e-300"};
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
@@ -100,6 +106,26 @@ public:
         return std::numeric_limits<Real>::lowest();
     }
     [[nodiscard]] static constexpr Real max() noexcept { return std::numeric_limits<Real>::max(); }
+
+    /// The probability density at x. The cumulative chance and the quantile need the incomplete
+    /// beta function: distributions/with_boost_math.hpp has them.
+    [[nodiscard]] constexpr double density(double x) const {
+        const double size = detail::magnitude(detail::number_or_refuse(param_type::law_name, x));
+        if (!detail::finite(size)) {
+            return 0;
+        }
+        const auto degrees = static_cast<double>(k());
+        const double root = detail::square_root(degrees);
+        const double place = detail::quotient(size, root);
+        const real t = place < 0x1p-500 ? 0x1p-500 : place; // nearer to 0 nothing changes
+        // x^2 / k has the law of odds of a beta of 1/2 and k/2.
+        const real square = t.value > 0x1p500 ? 0x1p1000 : (t * t).value;
+        const real v = real(1.0) / (square + 1.0);
+        const detail::scaled kernel =
+            detail::beta_kernel(0.5, (real(degrees) * 0.5).value, (square * v).value, v.value);
+        return detail::or_zero(kernel * detail::inverse(detail::split(t.value)) *
+                               detail::inverse(detail::split(root)));
+    }
 
 private:
     constexpr student_t(const param_type& p, double half)

@@ -21,12 +21,14 @@
 #include "leat/core/arctangent.hpp"
 #include "leat/core/barrier.hpp"
 #include "leat/core/concepts.hpp"
+#include "leat/core/error_free.hpp"
 #include "leat/core/errors.hpp"
 #include "leat/core/exponential.hpp"
 #include "leat/core/logarithm.hpp"
 #include "leat/core/scaled.hpp"
 #include "leat/core/sine_cosine.hpp"
 #include "leat/core/square_root.hpp"
+#include "leat/distributions/detail/evaluate.hpp"
 #include "leat/distributions/detail/into_range.hpp"
 #include "leat/distributions/detail/law.hpp"
 #include "leat/distributions/detail/quadrature.hpp" // the variance
@@ -120,6 +122,9 @@ public:
         return detail::into_signed<Real>((real(mean()) + pi).value);
     }
 
+    /// The probability density at x. (The cumulative chance is a series: with_boost_math.hpp.)
+    [[nodiscard]] constexpr double density(double x) const;
+
 private:
     static constexpr double pi = 2 * detail::half_pi;
 
@@ -160,6 +165,44 @@ constexpr double von_mises<Real>::variance() const noexcept {
     });
     const real mean_square = real(m.variance) + real(m.mean) * m.mean;
     return (detail::split(reach) * detail::split(reach) * detail::split(mean_square.value)).value();
+}
+
+template <detail::portable_real Real>
+constexpr double von_mises<Real>::density(double x) const {
+    const real away = real(detail::number_or_refuse(param_type::law_name, x)) - mean();
+    if (!(detail::magnitude(away.value) <= pi)) {
+        return 0;
+    }
+    const auto k = static_cast<double>(concentration());
+    real scaled_bessel = 1.0; // e^-k I0(k)
+    if (k > 50) {             // Abramowitz and Stegun, 9.7.1
+        real term = 1.0;
+        for (int i = 1; i <= 16; ++i) {
+            const real odd = static_cast<double>(2 * i - 1);
+            term = term * odd * odd / (real(static_cast<double>(8 * i)) * k);
+            scaled_bessel = scaled_bessel + term;
+        }
+        constexpr double root = 0x1.9884533d43651p-2; // 1 / sqrt(2 pi)
+        scaled_bessel = scaled_bessel * root / detail::square_root(k);
+    } else { // 9.6.12
+        const real square = k < 0x1p-500 ? 0.0 : (real(k) * 0.25 * k).value;
+        real term = 1.0;
+        for (int i = 1; i <= 110; ++i) {
+            term = term * square / static_cast<double>(i * i);
+            if (term < 0x1p-60) {
+                break;
+            }
+            scaled_bessel = scaled_bessel + term;
+        }
+        scaled_bessel = scaled_bessel * detail::natural_exp(-k);
+    }
+    // cos t - 1 is -2 sin^2(t / 2)
+    const double turns = (away / (real(4.0) * pi)).value;
+    const real sine = detail::magnitude(turns) < 0x1p-900 ? 0.0 : detail::sine_cosine(turns).sine;
+    const real exponent = real(k) * sine * sine * -2.0;
+    return detail::or_zero(
+        detail::exp_scaled(exponent.value) *
+        detail::inverse(detail::split((scaled_bessel * (real(2.0) * pi)).value)));
 }
 
 } // namespace leat
