@@ -3,8 +3,28 @@
 #include "digest/digest.hpp"
 #include "leat/distributions.hpp"
 #include "leat/engines/philox.hpp"
+#include "leat/uniform/open_interval.hpp"
+#include "leat/uniform/unit.hpp"
+
+#include <array>
+#include <string>
 
 namespace digests {
+namespace {
+
+/// What a law says of itself: quantiles at even chances, and density and cumulative chance there.
+template <class Law>
+void of_itself(const std::string& law_name, const Law& law) {
+    draws((law_name + ".of_itself").c_str(),
+          [&law](auto& g) {
+              const double p = leat::unit(g);
+              const double x = law.quantile(p);
+              return std::array<double, 3>{x, law.density(x), law.cumulative(x)};
+          },
+          20000);
+}
+
+} // namespace
 
 void laws() {
     draws("normal.standard", leat::normal{0, 1}, 200000); // wedges and the tail too
@@ -69,7 +89,47 @@ void laws() {
     draws("truncated_normal.far", leat::truncated_normal{1, 2, 5, 9});
     draws("truncated_normal.far_below", leat::truncated_normal{1, 2, -900, -5});
     draws("truncated_normal.float", leat::truncated_normal<float>{1, 2, 0, 3});
+    draws("gumbel.plain", leat::gumbel{5, 2}, 200000); // the upper tail too
+    draws("gumbel.float", leat::gumbel<float>{-3, 10});
+    draws("logistic.plain", leat::logistic{-1, 2}, 200000); // both tails too
+    draws("logistic.float", leat::logistic<float>{0, 10});
+    draws("laplace.plain", leat::laplace{2, 0.5});
+    draws("laplace.float", leat::laplace<float>{-3, 10});
+    draws("cauchy.plain", leat::cauchy{3, 2}, 200000); // denominators near 0 too
+    draws("cauchy.float", leat::cauchy<float>{-3, 10});
+    draws("pareto.plain", leat::pareto{2, 1.5});
+    draws("pareto.heavy", leat::pareto{1, 0.01});
+    draws("pareto.float", leat::pareto<float>{3, 2});
+    draws("rayleigh.plain", leat::rayleigh{1.5});
+    draws("rayleigh.float", leat::rayleigh<float>{8});
+    draws("maxwell.plain", leat::maxwell{297.3});
+    draws("maxwell.float", leat::maxwell<float>{3});
+    draws("triangular.plain", leat::triangular{-1, 0.5, 3});
+    draws("triangular.one_sided", leat::triangular{-1, -1, 3});
+    draws("triangular.float", leat::triangular<float>{-1, 0, 3});
+    draws("empirical.plain", leat::empirical({3, 1, 2.5, 2.5, 8}));
+    draws("empirical.float", leat::empirical<float>({3, 1, 2.5F}));
+    draws("piecewise_linear.plain", leat::piecewise_linear({0, 1, 3}, {0, 1, 0.5}));
+    draws("piecewise_linear.gap", leat::piecewise_linear({0, 1, 2, 3}, {2, 0, 0, 6}));
+    draws("piecewise_linear.float", leat::piecewise_linear<float>({-2, 1, 3}, {4, 0, 1}));
     draws("gamma.draw_log", [law = leat::gamma{0.01, 1}](auto& g) { return law.draw_log(g); });
+    of_itself("normal", leat::normal{-2.5, 3});
+    of_itself("lognormal", leat::lognormal{1, 0.25});
+    of_itself("exponential", leat::exponential{0.25});
+    of_itself("weibull", leat::weibull{1.5, 2});
+    of_itself("gumbel", leat::gumbel{5, 2});
+    of_itself("logistic", leat::logistic{-1, 2});
+    of_itself("laplace", leat::laplace{2, 0.5});
+    of_itself("cauchy", leat::cauchy{3, 2});
+    of_itself("pareto", leat::pareto{2, 1.5});
+    of_itself("rayleigh", leat::rayleigh{1.5});
+    of_itself("triangular", leat::triangular{-1, 0.5, 3});
+    of_itself("piecewise_linear", leat::piecewise_linear({0, 1, 3}, {0, 1, 0.5}));
+    draws("gamma.density", [u = leat::uniform{0, 60}](auto& g) {
+        return leat::gamma{20, 1}.density(u(g));
+    });
+    draws("maxwell.cumulative",
+          [u = leat::uniform{0, 9}](auto& g) { return leat::maxwell{1}.cumulative(u(g)); });
 }
 
 } // namespace digests

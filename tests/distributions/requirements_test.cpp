@@ -2,15 +2,25 @@
 // it (P3, P5, P8). A law joins by one line in `laws`: a parameter set that is not its default one.
 
 #include "leat/distributions/beta.hpp"
+#include "leat/distributions/cauchy.hpp"
 #include "leat/distributions/chi_squared.hpp"
+#include "leat/distributions/empirical.hpp"
 #include "leat/distributions/erlang.hpp"
 #include "leat/distributions/exponential.hpp"
 #include "leat/distributions/fisher_f.hpp"
 #include "leat/distributions/gamma.hpp"
+#include "leat/distributions/gumbel.hpp"
 #include "leat/distributions/inverse_gaussian.hpp"
+#include "leat/distributions/laplace.hpp"
+#include "leat/distributions/logistic.hpp"
 #include "leat/distributions/lognormal.hpp"
+#include "leat/distributions/maxwell.hpp"
 #include "leat/distributions/normal.hpp"
+#include "leat/distributions/pareto.hpp"
+#include "leat/distributions/piecewise_linear.hpp"
+#include "leat/distributions/rayleigh.hpp"
 #include "leat/distributions/student_t.hpp"
+#include "leat/distributions/triangular.hpp"
 #include "leat/distributions/truncated_normal.hpp"
 #include "leat/distributions/von_mises.hpp"
 #include "leat/distributions/weibull.hpp"
@@ -20,6 +30,7 @@
 
 #include <gtest/gtest.h>
 
+#include <cmath>
 #include <concepts>
 #include <cstdint>
 #include <limits>
@@ -76,7 +87,47 @@ using laws = ::testing::Types<
     law_case<decltype(
         [] { return leat::von_mises_parameters<double>{.mean = 2, .concentration = 3}; })>,
     law_case<decltype(
-        [] { return leat::von_mises_parameters<float>{.mean = -1, .concentration = 0.2F}; })>>;
+        [] { return leat::von_mises_parameters<float>{.mean = -1, .concentration = 0.2F}; })>,
+    law_case<decltype(
+        [] { return leat::gumbel_parameters<double>{.location = -3, .scale = 0.5}; })>,
+    law_case<decltype(
+        [] { return leat::logistic_parameters<double>{.location = -3, .scale = 0.5}; })>,
+    law_case<decltype(
+        [] { return leat::laplace_parameters<double>{.location = -3, .scale = 0.5}; })>,
+    law_case<decltype([] { return leat::laplace_parameters<float>{.location = 10, .scale = 2}; })>,
+    law_case<decltype(
+        [] { return leat::cauchy_parameters<double>{.location = -3, .scale = 0.5}; })>,
+    law_case<decltype([] { return leat::pareto_parameters<double>{.scale = 2, .shape = 3.5}; })>,
+    law_case<decltype([] { return leat::pareto_parameters<float>{.scale = 0.5F, .shape = 3}; })>,
+    law_case<decltype([] { return leat::rayleigh_parameters<double>{.scale = 2.5}; })>,
+    law_case<decltype([] { return leat::rayleigh_parameters<float>{.scale = 8}; })>,
+    law_case<decltype([] { return leat::maxwell_parameters<double>{.scale = 2.5}; })>,
+    law_case<decltype([] { return leat::maxwell_parameters<float>{.scale = 8}; })>,
+    law_case<decltype(
+        [] { return leat::triangular_parameters<double>{.lo = -1, .mode = 0, .hi = 4}; })>,
+    law_case<decltype(
+        [] { return leat::triangular_parameters<float>{.lo = 2, .mode = 5, .hi = 5}; })>,
+    law_case<decltype([] {
+        return leat::empirical_parameters<double>{.values = {-1, 2, 2, 8}};
+    })>,
+    law_case<decltype([] {
+        return leat::empirical_parameters<float>{.values = {0.5F, 3}};
+    })>,
+    law_case<decltype([] {
+        return leat::piecewise_linear_parameters<double>{.points = {0, 1, 3},
+                                                         .densities = {0, 1, 0.5}};
+    })>,
+    law_case<decltype([] {
+        return leat::piecewise_linear_parameters<float>{.points = {-2, 1, 3},
+                                                        .densities = {4, 0, 1}};
+    })>>;
+
+/// Whether a law's parameters are lists, which are copied with an allocation.
+template <class Parameters>
+constexpr bool holds_a_list() {
+    return requires(Parameters p) { p.values; }
+    || requires(Parameters p) { p.points; };
+}
 
 template <class Case>
 class LawRequirements : public ::testing::Test {};
@@ -107,7 +158,7 @@ TYPED_TEST(LawRequirements, TypesAndConstruction) {
     static_assert(std::same_as<typename parameters::distribution_type, law>);
     static_assert(std::is_aggregate_v<parameters>); // named fields: the design
     static_assert(std::regular<law> && std::regular<parameters>);
-    static_assert(std::is_trivially_copyable_v<law>);
+    static_assert(std::is_trivially_copyable_v<law> || holds_a_list<parameters>());
     static_assert(!std::is_convertible_v<parameters, law>); // explicit
 
     EXPECT_EQ(law{}.param(), parameters{});
@@ -159,8 +210,10 @@ TYPED_TEST(LawRequirements, AnyEngineServes) {
         sum += static_cast<double>(d(odd_range));
         sum += static_cast<double>(d(lehmer));
     }
-    EXPECT_GT(sum / 1500, d.mean() - d.variance()); // crude: a unit error, not a fit
-    EXPECT_LT(sum / 1500, d.mean() + d.variance() + 1);
+    if (!std::isnan(d.mean())) { // crude: a unit error, not a fit
+        EXPECT_GT(sum / 1500, d.mean() - d.variance());
+        EXPECT_LT(sum / 1500, d.mean() + d.variance() + 1);
+    }
 }
 
 // Rows os << d, is >> d: to the bit, whatever the stream's locale, flags and character.
@@ -222,8 +275,12 @@ void with_each_field(const Parameters& good, double value, Visit visit) {
         Parameters::each(p, [&](auto& field) {
             if (i++ == chosen) {
                 using type = std::remove_reference_t<decltype(field)>;
-                // No whole number is infinite: -1, which no law takes, stands for that.
-                field = std::is_integral_v<type> ? static_cast<type>(-1) : static_cast<type>(value);
+                if constexpr (!std::is_arithmetic_v<type>) { // a list: one of its entries
+                    field.back() = static_cast<typename type::value_type>(value);
+                } else { // no whole number is infinite: -1, which no law takes, stands for that
+                    field =
+                        std::is_integral_v<type> ? static_cast<type>(-1) : static_cast<type>(value);
+                }
             }
         });
         visit(p);
@@ -314,8 +371,11 @@ constexpr double sum_of_draws() {
 }
 
 TYPED_TEST(LawRequirements, ConstantEvaluationAgreesWithRunTime) {
-    constexpr double at_compile_time = sum_of_draws<typename TypeParam::law>();
-    EXPECT_EQ(sum_of_draws<typename TypeParam::law>(), at_compile_time);
+    using law = typename TypeParam::law;
+    if constexpr (!holds_a_list<typename law::param_type>()) { // not every compiler can allocate
+        constexpr double at_compile_time = sum_of_draws<law>();
+        EXPECT_EQ(sum_of_draws<law>(), at_compile_time);
+    }
 }
 
 } // namespace
