@@ -148,6 +148,28 @@ TEST(FillWords, MeetALimitAtTheWordOfTheLoop) {
     }
 }
 
+// A stream holds 2^64 - 1 words, no more (design, "Streams").
+TEST(FillWords, EndWhereTheStreamEnds) {
+    constexpr std::uint64_t capacity = ~std::uint64_t{0};
+    for (const std::size_t left : sizes{0, 1, 31, 32, 33, 100}) {
+        auto s = study().stream("last");
+        auto thin = study().thin_stream("last");
+        s.seek(capacity - left);
+        thin.seek(capacity - left);
+        auto expected = s.replica();
+        std::vector<std::uint64_t> words(200, 0);
+        std::vector<std::uint64_t> thin_words(200, 0);
+        EXPECT_THROW(leat::fill_words(words, s), leat::stream_exhausted);
+        EXPECT_THROW(leat::fill_words(thin_words, thin), leat::stream_exhausted);
+        EXPECT_EQ(s.position(), capacity);
+        EXPECT_EQ(thin.position(), capacity);
+        EXPECT_EQ(words, thin_words);
+        for (std::size_t i = 0; i < words.size(); ++i) {
+            ASSERT_EQ(words[i], i < left ? expected() : 0);
+        }
+    }
+}
+
 TEST(Fill, FromAStreamThatWasMovedFromThrowsAsADrawDoes) {
     auto first = study().stream("moved");
     const auto second = std::move(first);
@@ -195,6 +217,43 @@ TEST(Fill, LeavesTheEngineWhereASamplerThrew) {
         check(leat::xoshiro256_plus_plus{9}, leat::xoshiro256_plus_plus{9}, draws);
         check(std::mt19937_64{9}, std::mt19937_64{9}, draws);
     }
+}
+
+/// A sampler that takes two words a draw, and looks ahead for them in fills.
+struct two_words {
+    using result_type = std::uint64_t;
+    template <class G>
+    std::uint64_t operator()(G& g) const {
+        const std::uint64_t first = g();
+        const std::uint64_t second = g();
+        return first - second;
+    }
+    template <class Words>
+    void fill_from_words(std::span<std::uint64_t> out, Words& words) const {
+        ++*calls;
+        std::size_t i = 0;
+        while (i < out.size()) {
+            const auto ahead = words.ahead(2 * (out.size() - i));
+            std::size_t used = 0;
+            for (; ahead.size() - used >= 2; used += 2) {
+                out[i++] = ahead[used] - ahead[used + 1];
+            }
+            words.skip(used);
+            if (used < ahead.size()) { // a pair that two blocks share
+                out[i++] = (*this)(words);
+            }
+        }
+    }
+    int* calls;
+};
+
+TEST(Fill, UsesTheSamplersOwnFill) {
+    int calls = 0;
+    leat_test::expect_fill_equals_loop(two_words{&calls}, [] { return study().stream("two"); });
+    EXPECT_GT(calls, 0);
+    const int from_streams = calls;
+    leat_test::expect_fill_equals_loop(two_words{&calls}, [] { return leat::xoshiro256_braid{2}; });
+    EXPECT_GT(calls, from_streams);
 }
 
 /// A broken engine that makes words in bulk: zeros, which the ranges below reject (common practice:

@@ -24,6 +24,10 @@
 //       All of it: the draws of the loop, from a word_cursor. It may look ahead:
 //       words.ahead(n), words.skip(n). Preferred to from_word.
 //
+// Beside from_word, a sampler whose draw is a product with a unit real, or a short range of
+// integers, may say so by as_product() or as_short_range() (see uniform, uniform_integer): there
+// are vector kernels for these.
+//
 // Everything else that names its result_type or point_type draws from the cursor in a loop. Other
 // callables, and engines without bulk words, get the loop itself; a small engine is then held in a
 // local copy, which an optimiser keeps in registers, and is written back at the end.
