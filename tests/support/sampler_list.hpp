@@ -89,3 +89,13 @@ void each_region(Visit visit) {
 } // namespace leat_test
 
 #endif
+    visit("box", leat::box<3>{{0, 0, -4}, {60, 12.5, 0}});
+    visit("float box", leat::box<2, float>{{0, 0}, {60, 12.5}});
+    visit("ball", leat::ball<3>{{1, 2, 3}, 2.5});
+    visit("ball of six dimensions", leat::ball<6>{{1, 2, 3, 4, 5, 6}, 2.5});
+    visit("sphere", leat::sphere<3>{{1, 2, 3}, 2.5});
+    visit("thin shell", leat::shell<3>{{1, 2, 3}, 2.25, 2.5});
+    visit("cone", leat::cone{{1, 2, 3}, {1, -2, 0.5}, 0.3, 20});
+    visit("torus", leat::torus{{1, 2, 3}, 2, 0.7});
+    visit("rotation", leat::rotation{});
+    visit("affine image", leat::affine_image{leat::disk{{0, 0}, 1}, {{{1, 3}, {-2, 4}}}, {3, 4}});
