@@ -34,7 +34,8 @@ struct fault {
     const char* parameter = nullptr;
     double value = 0;
     const char* allowed = nullptr;
-    std::uint64_t entry = no_entry; // which one, where the parameter is a list
+    std::uint64_t entry = no_entry;  // which one, where the parameter is a list
+    std::uint64_t column = no_entry; // and of which column, where it is a matrix
 };
 
 /// True for neither infinite nor NaN.
@@ -176,6 +177,10 @@ protected:
     constexpr explicit law(const param_type& p) : parameters_(p) {
         const fault found = p.fault();
         if (found.parameter != nullptr) {
+            if (found.column != fault::no_entry) {
+                refuse_entry(Parameters::law_name, found.parameter, found.entry, found.column,
+                             found.value, found.allowed);
+            }
             if (found.entry != fault::no_entry) {
                 refuse_entry(Parameters::law_name, found.parameter, found.entry, found.value,
                              found.allowed);
