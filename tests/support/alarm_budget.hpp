@@ -119,6 +119,10 @@ inline constexpr declared_checks alarm_budget[] = {
     {"CategoricalGoodness.OneHeavyOutcomeAmongAMillion", 1},
     {"PlantedFaults.TextbookAliasInDoublePasses", 1},
     {"WeightedIndexGoodness.BeforeAndAfterUpdates", 5},
+    {"MultivariateNormalGoodness.MarginsAndPairs", 13},
+    {"DirichletGoodness.SharesAndSumsOfTwo", 22},
+    {"DirichletGoodness.SmallParameters", 3},
+    {"MultinomialGoodness.MarginsAndSumsOfTwo", 32},
     {"StreamStatistics.FirstWordsOfSeedsAreDistinct", 2}, // a chance of 1.2e-10
     {"StreamStatistics.FirstWordsOfSeedsAreBalanced", 65},
     {"StreamStatistics.FirstWordsOfNeighbouringSeedsAreUncorrelated", 80},
