@@ -9,6 +9,7 @@
 #include "leat/regions/bounds.hpp"
 #include "leat/regions/box.hpp"
 #include "leat/regions/cap.hpp"
+#include "leat/regions/combination.hpp"
 #include "leat/regions/cone.hpp"
 #include "leat/regions/cylinder.hpp"
 #include "leat/regions/directions.hpp"
@@ -16,11 +17,14 @@
 #include "leat/regions/ellipse.hpp"
 #include "leat/regions/ellipsoid.hpp"
 #include "leat/regions/polyline.hpp"
+#include "leat/regions/rejection.hpp"
 #include "leat/regions/rotation.hpp"
 #include "leat/regions/sector.hpp"
 #include "leat/regions/segment.hpp"
 #include "leat/regions/shell.hpp"
+#include "leat/regions/simplex.hpp"
 #include "leat/regions/sphere.hpp"
 #include "leat/regions/torus.hpp"
+#include "leat/regions/triangle.hpp"
 
 #endif

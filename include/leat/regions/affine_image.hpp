@@ -19,7 +19,9 @@
 #include "leat/core/concepts.hpp"
 #include "leat/core/errors.hpp"
 #include "leat/core/scaled.hpp"
+#include "leat/regions/detail/dimension.hpp"
 #include "leat/regions/detail/extent.hpp"
+#include "leat/regions/detail/matrix.hpp"
 #include "leat/regions/detail/point.hpp"
 #include "leat/regions/detail/region_base.hpp"
 
@@ -29,25 +31,11 @@
 #include <type_traits>
 
 namespace leat {
-namespace detail {
-
-/// Whether a region fills its space: all but those that say otherwise.
-template <class Region>
-constexpr bool fills_its_space() noexcept {
-    if constexpr (requires { Region::measured_dimension; }) {
-        return Region::measured_dimension == Region::dimension;
-    } else {
-        return true;
-    }
-}
-
-} // namespace detail
-
 /// The points matrix * x + shift, x being those of a region.
 template <class Region>
 class affine_image : public detail::region_base<affine_image<Region>, typename Region::real_type,
                                                 Region::dimension> {
-    static_assert(detail::fills_its_space<Region>(),
+    static_assert(detail::measured_dimension_of<Region> == Region::dimension,
                   "leat::affine_image takes solids: the image of a surface is not uniform by area");
     static constexpr std::size_t n = Region::dimension;
     using Real = typename Region::real_type;
@@ -134,76 +122,23 @@ public:
 
 private:
     using typename base::real;
-    using wide_matrix = std::array<std::array<double, n>, n>;
     static constexpr int largest_exponent = std::is_same_v<Real, double> ? 500 : 60;
     static constexpr double most_loss = std::is_same_v<Real, double> ? 0x1p40 : 0x1p12;
 
     static constexpr double size(double x) noexcept { return x < 0 ? -x : x; }
 
-    // Gauss and Jordan's elimination with the largest pivot of a column.
     constexpr void invert() {
-        wide_matrix a{};
         for (std::size_t i = 0; i < n; ++i) {
             for (std::size_t j = 0; j < n; ++j) {
-                a[i][j] = double{matrix_[i][j]};
-            }
-            inverse_[i][i] = 1;
-        }
-        for (std::size_t k = 0; k < n; ++k) {
-            std::size_t pivot = k;
-            for (std::size_t i = k + 1; i < n; ++i) {
-                pivot = size(a[i][k]) > size(a[pivot][k]) ? i : pivot;
-            }
-            if (!(size(a[pivot][k]) >= 0x1p-900)) {
-                refuse_singular();
-            }
-            const auto row = a[k];
-            a[k] = a[pivot];
-            a[pivot] = row;
-            const auto inverse_row = inverse_[k];
-            inverse_[k] = inverse_[pivot];
-            inverse_[pivot] = inverse_row;
-            const double p = a[k][k];
-            determinant_ = determinant_ * detail::split(size(p));
-            determinant_ =
-                detail::split(determinant_.factor) * detail::scaled{1, determinant_.exponent};
-            for (std::size_t j = 0; j < n; ++j) {
-                a[k][j] = detail::held(a[k][j] / p);
-                inverse_[k][j] = detail::held(inverse_[k][j] / p);
-            }
-            for (std::size_t i = 0; i < n; ++i) {
-                const real factor = a[i][k];
-                if (i == k || factor.value == 0) {
-                    continue;
-                }
-                for (std::size_t j = 0; j < n; ++j) {
-                    a[i][j] = (real(a[i][j]) - factor * a[k][j]).value;
-                    inverse_[i][j] = (real(inverse_[i][j]) - factor * inverse_[k][j]).value;
-                }
+                inverse_[i][j] = double{matrix_[i][j]};
             }
         }
-        require_condition();
-    }
-
-    // Row i of the inverse times the matrix is a row of the unit matrix; how large the terms are
-    // that cancel there is what undoing the map loses. Stretching an axis alone loses nothing.
-    constexpr void require_condition() const {
-        for (std::size_t i = 0; i < n; ++i) {
-            for (std::size_t j = 0; j < n; ++j) {
-                real terms = 0.0;
-                for (std::size_t k = 0; k < n; ++k) {
-                    const real term = real(inverse_[i][k]) * double{matrix_[k][j]};
-                    terms = terms + size(term.value);
-                }
-                if (!(terms <= most_loss)) {
-                    refuse_singular();
-                }
-            }
+        const detail::square_matrix<n> matrix = inverse_;
+        if (!detail::invert(inverse_, determinant_) ||
+            !(detail::largest_terms(inverse_, matrix) <= most_loss)) {
+            detail::refuse("affine_image",
+                           "the matrix is singular, or too close to it to be undone");
         }
-    }
-
-    [[noreturn]] static constexpr void refuse_singular() {
-        detail::refuse("affine_image", "the matrix is singular, or too close to it to be undone");
     }
 
     constexpr void find_bounds() {
@@ -234,7 +169,7 @@ private:
     Region region_;
     matrix_type matrix_;
     point_type shift_;
-    wide_matrix inverse_{};
+    detail::square_matrix<n> inverse_{};
     detail::scaled determinant_{1, 0};
 };
 

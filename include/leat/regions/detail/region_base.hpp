@@ -171,6 +171,15 @@ constexpr double scale_of(Real size) noexcept {
     return power_of_two<double>(1 - exponent_of(double{size}));
 }
 
+/// Makes a box reach as far as p.
+template <portable_real Real, std::size_t N>
+constexpr void extend(region_bounds<Real, N>& box, const std::array<Real, N>& p) noexcept {
+    for (std::size_t i = 0; i < N; ++i) {
+        box.low[i] = p[i] < box.low[i] ? p[i] : box.low[i];
+        box.high[i] = p[i] > box.high[i] ? p[i] : box.high[i];
+    }
+}
+
 /// The largest size of a coordinate in a box.
 template <portable_real Real, std::size_t N>
 constexpr double largest_coordinate(const region_bounds<Real, N>& box) noexcept {
