@@ -16,6 +16,7 @@
 
 #include "leat/core/barrier.hpp"
 #include "leat/core/concepts.hpp"
+#include "leat/core/error_free.hpp" // two_sum, two_product
 #include "leat/core/exponential.hpp"
 #include "leat/core/logarithm.hpp"
 #include "leat/core/scaled.hpp"
@@ -41,7 +42,10 @@ constexpr double log_negative_binomial_mass(double k, double r, double p) noexce
     using real = strict<double>;
     const real q = real(1.0) - p;
     const real all = real(k) + r;
-    const real difference = real(k) * p - real(r) * q; // k - (k + r) q
+    // k - (k + r) q, as (k + r) p - r: the products are large beside their difference.
+    const two_part sum = two_sum(k, r);
+    const two_part successes = two_product(sum.high, p);
+    const real difference = (real(successes.high) - r) + (real(sum.low) * p + successes.low);
     return (real(log_poisson_mass(k, (all * q).value, difference.value)) +
             log_poisson_mass(r, (all * p).value, -difference.value) -
             log_poisson_mass_at_mean(all.value) + natural_log((real(r) / all).value))
