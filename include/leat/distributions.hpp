@@ -6,8 +6,10 @@
 #include "leat/distributions/bernoulli.hpp"
 #include "leat/distributions/beta.hpp"
 #include "leat/distributions/binomial.hpp"
+#include "leat/distributions/categorical.hpp"
 #include "leat/distributions/cauchy.hpp"
 #include "leat/distributions/chi_squared.hpp"
+#include "leat/distributions/dirichlet.hpp"
 #include "leat/distributions/empirical.hpp"
 #include "leat/distributions/erlang.hpp"
 #include "leat/distributions/exponential.hpp"
@@ -21,6 +23,8 @@
 #include "leat/distributions/logistic.hpp"
 #include "leat/distributions/lognormal.hpp"
 #include "leat/distributions/maxwell.hpp"
+#include "leat/distributions/multinomial.hpp"
+#include "leat/distributions/multivariate_normal.hpp"
 #include "leat/distributions/negative_binomial.hpp"
 #include "leat/distributions/normal.hpp"
 #include "leat/distributions/pareto.hpp"
@@ -32,6 +36,7 @@
 #include "leat/distributions/truncated_normal.hpp"
 #include "leat/distributions/von_mises.hpp"
 #include "leat/distributions/weibull.hpp"
+#include "leat/distributions/weighted_index.hpp"
 #include "leat/distributions/zipf.hpp"
 
 #endif

@@ -3,6 +3,7 @@
 #ifndef LEAT_UNIFORM_HPP
 #define LEAT_UNIFORM_HPP
 
+#include "leat/uniform/alias_table.hpp"
 #include "leat/uniform/open_interval.hpp"
 #include "leat/uniform/permute.hpp"
 #include "leat/uniform/uniform_integer.hpp"

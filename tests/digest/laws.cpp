@@ -8,9 +8,19 @@
 
 #include <array>
 #include <string>
+#include <vector>
 
 namespace digests {
 namespace {
+
+/// The squares of 1 to n, as weights.
+std::vector<double> squares(int n) {
+    std::vector<double> result;
+    for (int i = 1; i <= n; ++i) {
+        result.push_back(static_cast<double>(i) * i);
+    }
+    return result;
+}
 
 /// What a law says of itself: quantiles at even chances, and density and cumulative chance there.
 template <class Law>
@@ -130,6 +140,20 @@ void laws() {
     });
     draws("maxwell.cumulative",
           [u = leat::uniform{0, 9}](auto& g) { return leat::maxwell{1}.cumulative(u(g)); });
+    draws("categorical.die", leat::categorical({1, 1, 1, 1, 1, 1}));
+    draws("categorical.holes", leat::categorical({0, 3, 0, 0, 1, 1e-3, 0, 2.5, 0}));
+    draws("categorical.wide", leat::categorical({1e300, 4.9e-324, 0, 1, 1.7e308, 1e307}));
+    draws("categorical.many", leat::categorical(squares(1000)));
+    draws("weighted_index.plain", leat::weighted_index({0.1, 0, 1e-9, 3, 7e5, 2e5, 1}));
+    draws("weighted_index.many", leat::weighted_index(squares(1000)));
+    draws("multivariate_normal.plain",
+          leat::multivariate_normal({1, -2, 0.5}, {{4, 1.2, -0.4}, {1.2, 9, 2}, {-0.4, 2, 1}}));
+    draws("multivariate_normal.singular",
+          leat::multivariate_normal({1, 2, 0}, {{2, 1, 3}, {1, 5, 6}, {3, 6, 9}}));
+    draws("dirichlet.plain", leat::dirichlet({0.5, 2, 1, 7}));
+    draws("dirichlet.small", leat::dirichlet({1e-3, 1e-8, 2e-3}));
+    draws("multinomial.few", leat::multinomial(12, {1, 2, 0, 3}));
+    draws("multinomial.many", leat::multinomial(1000000000000, {0.02, 0.97, 1e-11, 0.01}));
 }
 
 } // namespace digests

@@ -71,6 +71,12 @@ void each_law(Visit visit) {
     visit("truncated_normal, wide", leat::truncated_normal{0, 1, -0.5, 4});
     visit("von_mises", leat::von_mises{2, 3});
     visit("weibull", leat::weibull{1.5, 8});
+    visit("categorical", leat::categorical({1, 0, 7.5, 1e-3, 300}));
+    visit("categorical of 8 bits", leat::categorical<std::uint8_t>({1, 0, 3}));
+    visit("dirichlet", leat::dirichlet({0.2, 1, 30}));
+    visit("multinomial", leat::multinomial(100, {1, 5, 3}));
+    visit("multivariate_normal", leat::multivariate_normal({1, 2}, {{4, 1}, {1, 9}}));
+    visit("weighted_index", leat::weighted_index({1, 0, 2, 0.25, 8}));
     visit("float exponential", leat::exponential<float>{3});
     visit("float gamma", leat::gamma<float>{40, 0.5});
     visit("float lognormal", leat::lognormal<float>{-1, 2});
