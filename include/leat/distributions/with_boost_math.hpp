@@ -4,24 +4,35 @@
 //     leat::cumulative(law, x)    leat::quantile(law, p)    leat::density(law, x)
 //
 // They call the law's own member where there is one (the same bits everywhere), else Boost.Math:
-// gamma and maxwell by the incomplete gamma function. Results of Boost.Math are accurate to about
-// 1e-13, but may differ in the last digits between machines: promise P1 does not cover them.
-// Arguments and refusals are those of the members: x NaN and p outside (0, 1) are refused, results
-// kept finite. Source: the definitions (Abramowitz and Stegun, 26.4, 26.5). This header needs
-// Boost.Math; leat.hpp does not include it, and nothing else of leat needs it. Not for sampling:
-// the laws draw without it.
+// gamma, erlang, chi_squared and maxwell by the incomplete gamma function, beta, student_t and
+// fisher_f by the incomplete beta function, inverse_gaussian by a search. Results of Boost.Math are
+// accurate to about 1e-13, but may differ in the last digits between machines: promise P1 does not
+// cover them. Arguments and refusals are those of the members: x NaN and p outside (0, 1) are
+// refused, results kept finite. Source: the definitions (Abramowitz and Stegun, 26.4, 26.5). This
+// header needs Boost.Math; leat.hpp does not include it, and nothing else of leat needs it. Not for
+// sampling: the laws draw without it.
 
 #ifndef LEAT_DISTRIBUTIONS_WITH_BOOST_MATH_HPP
 #define LEAT_DISTRIBUTIONS_WITH_BOOST_MATH_HPP
 
 #include "leat/core/concepts.hpp"
 #include "leat/core/square_root.hpp"
+#include "leat/distributions/beta.hpp"
+#include "leat/distributions/chi_squared.hpp"
 #include "leat/distributions/detail/evaluate.hpp"
 #include "leat/distributions/detail/into_range.hpp"
+#include "leat/distributions/erlang.hpp"
+#include "leat/distributions/fisher_f.hpp"
 #include "leat/distributions/gamma.hpp"
+#include "leat/distributions/inverse_gaussian.hpp"
 #include "leat/distributions/maxwell.hpp"
+#include "leat/distributions/student_t.hpp"
 
+#include <boost/math/distributions/fisher_f.hpp>
+#include <boost/math/distributions/inverse_gaussian.hpp>
+#include <boost/math/distributions/students_t.hpp>
 #include <boost/math/policies/policy.hpp>
+#include <boost/math/special_functions/beta.hpp>
 #include <boost/math/special_functions/gamma.hpp>
 
 namespace leat {
@@ -87,6 +98,101 @@ double quantile(const maxwell<Real>& law, double p) {
     const double half_square = detail::gamma_quantile(1.5, 1, p);
     return detail::product(static_cast<double>(law.scale()),
                            detail::square_root(detail::product(2, half_square)));
+}
+
+/// P(X <= x) of an Erlang law.
+template <detail::portable_real Real>
+double cumulative(const erlang<Real>& law, double x) {
+    detail::number_or_refuse("erlang", x);
+    return detail::gamma_cumulative(static_cast<double>(law.k()),
+                                    detail::quotient(1, static_cast<double>(law.rate())), x);
+}
+/// The x with cumulative(law, x) = p, 0 < p < 1.
+template <detail::portable_real Real>
+double quantile(const erlang<Real>& law, double p) {
+    detail::chance_or_refuse("erlang", p);
+    return detail::gamma_quantile(static_cast<double>(law.k()),
+                                  detail::quotient(1, static_cast<double>(law.rate())), p);
+}
+
+/// P(X <= x) of a chi-squared law.
+template <detail::portable_real Real>
+double cumulative(const chi_squared<Real>& law, double x) {
+    detail::number_or_refuse("chi_squared", x);
+    return detail::gamma_cumulative(static_cast<double>(law.k()) / 2, 2, x);
+}
+/// The x with cumulative(law, x) = p, 0 < p < 1.
+template <detail::portable_real Real>
+double quantile(const chi_squared<Real>& law, double p) {
+    detail::chance_or_refuse("chi_squared", p);
+    return detail::gamma_quantile(static_cast<double>(law.k()) / 2, 2, p);
+}
+
+/// P(X <= x) of a beta law.
+template <detail::portable_real Real>
+double cumulative(const beta<Real>& law, double x) {
+    detail::number_or_refuse("beta", x);
+    return !(x > 0) ? 0
+           : x >= 1 ? 1
+                    : boost::math::ibeta(static_cast<double>(law.a()), static_cast<double>(law.b()),
+                                         x, detail::boost_policy());
+}
+/// The x with cumulative(law, x) = p, 0 < p < 1; never 0 or 1.
+template <detail::portable_real Real>
+double quantile(const beta<Real>& law, double p) {
+    detail::chance_or_refuse("beta", p);
+    const double x = boost::math::ibeta_inv(
+        static_cast<double>(law.a()), static_cast<double>(law.b()), p, detail::boost_policy());
+    return x < 1 ? detail::into_positive<double>(x) : 1 - 0x1p-53;
+}
+
+/// P(X <= x) of Student's law.
+template <detail::portable_real Real>
+double cumulative(const student_t<Real>& law, double x) {
+    detail::number_or_refuse("student_t", x);
+    if (!detail::finite(x)) {
+        return x < 0 ? 0 : 1;
+    }
+    const boost::math::students_t_distribution<double, detail::boost_policy> known(
+        static_cast<double>(law.k()));
+    return boost::math::cdf(known, x);
+}
+/// The x with cumulative(law, x) = p, 0 < p < 1.
+template <detail::portable_real Real>
+double quantile(const student_t<Real>& law, double p) {
+    detail::chance_or_refuse("student_t", p);
+    const boost::math::students_t_distribution<double, detail::boost_policy> known(
+        static_cast<double>(law.k()));
+    return detail::kept_normal(boost::math::quantile(known, p));
+}
+
+/// P(X <= x) of Fisher's F law.
+template <detail::portable_real Real>
+double cumulative(const fisher_f<Real>& law, double x) {
+    detail::number_or_refuse("fisher_f", x);
+    if (!(x > 0) || !detail::finite(x)) {
+        return x > 0 ? 1 : 0;
+    }
+    const boost::math::fisher_f_distribution<double, detail::boost_policy> known(
+        static_cast<double>(law.d1()), static_cast<double>(law.d2()));
+    return boost::math::cdf(known, x);
+}
+/// The x with cumulative(law, x) = p, 0 < p < 1.
+template <detail::portable_real Real>
+double quantile(const fisher_f<Real>& law, double p) {
+    detail::chance_or_refuse("fisher_f", p);
+    const boost::math::fisher_f_distribution<double, detail::boost_policy> known(
+        static_cast<double>(law.d1()), static_cast<double>(law.d2()));
+    return detail::into_positive<double>(boost::math::quantile(known, p));
+}
+
+/// The x with P(X <= x) = p of an inverse Gaussian law, 0 < p < 1.
+template <detail::portable_real Real>
+double quantile(const inverse_gaussian<Real>& law, double p) {
+    detail::chance_or_refuse("inverse_gaussian", p);
+    const boost::math::inverse_gaussian_distribution<double, detail::boost_policy> known(
+        static_cast<double>(law.param().mean), static_cast<double>(law.shape()));
+    return detail::into_positive<double>(boost::math::quantile(known, p));
 }
 
 } // namespace leat
