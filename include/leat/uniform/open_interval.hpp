@@ -66,7 +66,7 @@ public:
 
     /// One value.
     template <random_words G>
-    constexpr Real operator()(G& g) const {
+    [[gnu::always_inline]] constexpr Real operator()(G& g) const {
         const std::uint64_t word = detail::unit_word<Real>(g);
         return map_(word);
     }

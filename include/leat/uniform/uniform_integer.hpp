@@ -77,9 +77,9 @@ constexpr Word multiply_shift(Word n, Draw draw, const char* name) {
     return x.upper;
 }
 
-/// Uniform on 0 .. last.
+/// Uniform on 0 .. last. Inlined by force: most of it falls away where the range is known.
 template <random_words G>
-constexpr std::uint64_t up_to(std::uint64_t last, G& g, const char* name) {
+[[gnu::always_inline]] constexpr std::uint64_t up_to(std::uint64_t last, G& g, const char* name) {
     constexpr std::uint64_t narrow = std::numeric_limits<std::uint32_t>::max();
     if (last < narrow) {
         return multiply_shift<std::uint32_t>(
@@ -181,7 +181,7 @@ public:
 
     /// One value.
     template <random_words G>
-    constexpr Int operator()(G& g) const {
+    [[gnu::always_inline]] constexpr Int operator()(G& g) const {
         return at(detail::up_to(span(), g, "uniform_integer"));
     }
     /// For fills: the draw whose first 64-bit word is `word`, if no rejection is in question.
