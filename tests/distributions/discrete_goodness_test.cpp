@@ -150,15 +150,31 @@ leat::wide_integer choose(unsigned n, unsigned k) {
     return c;
 }
 
-/// choose(marked, k) choose(rest, draws - k) / choose(population, draws), by exact integers.
-double exact_mass(unsigned population, unsigned marked, unsigned draws, unsigned k) {
-    if (k > marked || k > draws || draws - k > population - marked) {
-        return 0;
+/// choose(marked, k) choose(rest, draws - k) / choose(population, draws) for k = least .. most, by
+/// exact integers; each is the one before times a fraction that leaves no remainder.
+class exact_masses {
+public:
+    exact_masses(unsigned population, unsigned marked, unsigned draws)
+        : least_(draws + marked > population ? draws + marked - population : 0) {
+        const unsigned most = std::min(marked, draws);
+        const auto all = choose(population, draws);
+        auto ways = choose(marked, least_) * choose(population - marked, draws - least_);
+        for (unsigned k = least_;; ++k) {
+            const auto quotient = static_cast<std::uint64_t>((ways << 62) / all);
+            masses_.push_back(std::ldexp(static_cast<double>(quotient), -62));
+            if (k == most) {
+                return;
+            }
+            ways = ways * leat::wide_integer{(marked - k) * (draws - k)} /
+                   leat::wide_integer{(k + 1) * (population - marked - draws + k + 1)};
+        }
     }
-    const auto ways = choose(marked, k) * choose(population - marked, draws - k);
-    const auto quotient = (ways << 62) / choose(population, draws);
-    return std::ldexp(static_cast<double>(static_cast<std::uint64_t>(quotient)), -62);
-}
+    double operator()(double k) const { return masses_[static_cast<std::size_t>(k) - least_]; }
+
+private:
+    unsigned least_;
+    std::vector<double> masses_;
+};
 
 TEST(DiscreteGoodness, Hypergeometric) {
     struct parameters {
@@ -187,9 +203,7 @@ TEST(DiscreteGoodness, Hypergeometric) {
         const double variance = mean * (1 - share) * (all - draws) / (all - 1);
         auto report = moment_tests(name, sampled, {mean, variance, 0.5}, 1e9);
         report.push_back(mass_test(name, sampled, law.min(), law.max(),
-                                   [&, m = marked, d = draws, n = population](double k) {
-                                       return exact_mass(n, m, d, static_cast<unsigned>(k));
-                                   }));
+                                   exact_masses(population, marked, draws)));
         check(report);
     }
     using reference = boost::math::hypergeometric_distribution<double>;
@@ -324,9 +338,7 @@ TEST(DiscreteFaults, BinomialByRoundedNormal) {
 
 TEST(DiscreteFaults, HypergeometricWithReplacement) {
     const auto test = [](const std::vector<std::int64_t>& draws) {
-        return mass_test("hypergeometric", draws, 0, 10, [](double k) {
-            return exact_mass(200, 60, 10, static_cast<unsigned>(k));
-        });
+        return mass_test("hypergeometric", draws, 0, 10, exact_masses(200, 60, 10));
     };
     EXPECT_TRUE(is_rejected({test(sample("wrong", leat::binomial{10, 0.3}))}));
     check(test(sample("right", leat::hypergeometric{200, 60, 10})));
