@@ -14,6 +14,8 @@
 #include <benchmark/benchmark.h>
 
 #include <array>
+#include <cstddef>
+#include <type_traits>
 #include <vector>
 
 namespace {
@@ -38,15 +40,69 @@ struct disk_by_square_root { // R sqrt(u) and a uniform angle
     }
 };
 
+// The published alternatives that were measured and not kept.
+
+template <std::size_t N>
+struct ball_by_normals {
+    template <class G>
+    std::array<double, N> operator()(G& g) const {
+        const leat::detail::normal_vector<N> normals(g);
+        const leat::detail::strict<double> e = leat::detail::standard_exponential(g);
+        return leat::detail::over(normals.x,
+                                  leat::detail::square_root((e + e + normals.square).value));
+    }
+};
+
+template <std::size_t N>
+struct sphere_by_normals {
+    template <class G>
+    std::array<double, N> operator()(G& g) const {
+        const leat::detail::normal_vector<N> normals(g);
+        return leat::detail::over(normals.x, leat::detail::square_root(normals.square));
+    }
+};
+
+template <std::size_t N>
+struct ball_by_rejection {
+    template <class G>
+    std::array<double, N> operator()(G& g) const {
+        for (;;) {
+            std::array<double, N> p{};
+            double square = 0;
+            for (double& x : p) {
+                x = 2 * leat::unit(g) - 1;
+                square += x * x;
+            }
+            if (square < 1) {
+                return p;
+            }
+        }
+    }
+};
+
+struct rotation_by_sines { // Shoemake's own way to the two angles
+    template <class G>
+    std::array<double, 4> operator()(G& g) const {
+        using real = leat::detail::strict<double>;
+        const real u = leat::unit(g);
+        const auto a = leat::detail::sine_cosine(leat::unit(g));
+        const auto b = leat::detail::sine_cosine(leat::unit(g));
+        const real first = leat::detail::square_root((real(1) - u).value);
+        const real second = leat::detail::square_root(u.value);
+        return {(first * a.sine).value, (first * a.cosine).value, (second * b.sine).value,
+                (second * b.cosine).value};
+    }
+};
+
 leat::stream make(leat::stream*) { return leat::source{1}.stream(); }
 leat::xoshiro256_plus_plus make(leat::xoshiro256_plus_plus*) { return {}; }
 
 template <class Engine, class Sampler>
 void fill_points(benchmark::State& state, Sampler sampler) {
     Engine g = make(static_cast<Engine*>(nullptr));
-    std::vector<point> points(4096);
+    std::vector<std::invoke_result_t<Sampler&, Engine&>> points(4096);
     for (auto _ : state) {
-        for (point& p : points) {
+        for (auto& p : points) {
             p = sampler(g);
         }
         benchmark::DoNotOptimize(points.data());
@@ -68,6 +124,20 @@ void register_all(const std::string& engine) {
     add("disk_by_square_root", disk_by_square_root{});
     add("ellipse", leat::ellipse{{0, 0}, 8.5, 3.2, 0.4});
     add("ellipse_by_rejection", leat::ellipse_by_rejection{{0, 0}, 8.5, 3.2, 0.4});
+    add("ball<3>", leat::ball<3>{{0, 0, 0}, 1});
+    add("ball<3>_by_normals", ball_by_normals<3>{});
+    add("ball<4>", leat::ball<4>{{0, 0, 0, 0}, 1});
+    add("ball<4>_by_rejection", ball_by_rejection<4>{});
+    add("sphere<3>", leat::sphere<3>{{0, 0, 0}, 1});
+    add("sphere<3>_by_normals", sphere_by_normals<3>{});
+    add("sphere<4>_by_normals", sphere_by_normals<4>{});
+    add("rotation", leat::rotation{});
+    add("rotation_by_sines", rotation_by_sines{});
+    add("annulus", leat::annulus{{0, 0}, 1, 2.5});
+    add("sector", leat::sector{{0, 0}, 1, 0, 1});
+    add("cylinder", leat::cylinder{{0, 0, 0}, {1, 2, 3}, 1, 1});
+    add("cone", leat::cone{{0, 0, 0}, {1, 2, 3}, 1, 1});
+    add("torus", leat::torus{{0, 0, 0}, 2, 1});
 }
 
 const bool registered = [] {

@@ -7,10 +7,10 @@
 // Uniform by the only measure that no rotation changes (Haar's). Method: K. Shoemake, Uniform
 // random rotations, Graphics Gems III, 1992: two circles, of radius sqrt(1 - u) and sqrt(u), which
 // together are a point uniform on the unit sphere in four dimensions. The radius and the two angles
-// are taken from two points of the disk (Marsaglia, Ann. Math. Stat. 43, 1972): 15 ns a rotation,
-// where Shoemake's sines and cosines of uniform angles took 24 (g++ 12, xoshiro256++). q and -q are
-// the same rotation; both come. Never take three uniform Euler angles, nor a uniform angle about a
-// uniform axis: the angle has the law (t - sin t) / pi on 0 <= t <= pi.
+// are taken from two points of the disk (Marsaglia, Ann. Math. Stat. 43, 1972), a fifth faster than
+// the sines and cosines of uniform angles (11.8 against 14.4 ns; g++ 12, xoshiro256++). q and -q
+// are the same rotation; both come. Never take three uniform Euler angles, nor a uniform angle
+// about a uniform axis: the angle has the law (t - sin t) / pi on 0 <= t <= pi.
 //
 // Words, all word64, float included: 5.09 on average. A quaternion has length 1 within 4 ulp.
 // Errors: engine_stuck. Not for small random turns (that is another law), nor for a direction alone
