@@ -471,8 +471,7 @@ TEST(TruncatedNormal, ExtremeParametersStayInTheSupport) {
     }
 }
 
-// The intervals of two engines at the same words: common random numbers stay common as sd goes to
-// 0.
+// Common random numbers stay common as sd goes to 0.
 TEST(TruncatedNormal, ADegenerateLawGivesItsMeanAndConsumesWords) {
     const leat::truncated_normal law{2.5, 0, 1, 3};
     engine g{7};

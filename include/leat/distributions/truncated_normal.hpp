@@ -23,7 +23,6 @@
 #include "leat/core/barrier.hpp"
 #include "leat/core/concepts.hpp"
 #include "leat/core/error_free.hpp" // magnitude
-#include "leat/core/error_function.hpp"
 #include "leat/core/errors.hpp"
 #include "leat/core/exponential.hpp"
 #include "leat/core/scaled.hpp"
@@ -31,6 +30,7 @@
 #include "leat/distributions/detail/evaluate.hpp"
 #include "leat/distributions/detail/into_range.hpp"
 #include "leat/distributions/detail/law.hpp"
+#include "leat/distributions/detail/normal_mass.hpp"
 #include "leat/distributions/detail/quadrature.hpp" // the moments
 #include "leat/distributions/detail/ziggurat.hpp"
 #include "leat/uniform/unit.hpp"
@@ -284,13 +284,6 @@ private:
 
     constexpr detail::moments moments_of_draws() const noexcept;
 
-    /// The integral of exp(-s (a + s / 2)) over s from 0 to v, a >= 0.
-    static constexpr double mass(double a, double v) noexcept;
-    /// exp(-v (a + v / 2)).
-    static constexpr double fall(double a, double v) noexcept {
-        const detail::scaled power = detail::exp_scaled((-(real(v) * (real(v) * 0.5 + a))).value);
-        return detail::or_zero(power);
-    }
     /// A distance in sd, kept where its square means something.
     static constexpr double kept(double distance) noexcept {
         return distance > 0x1p400 ? 0x1p400 : distance;
@@ -303,10 +296,10 @@ private:
     /// The mass of the interval, in units of exp(-gap^2 / 2).
     constexpr double whole_mass() const noexcept {
         if (!holds_mean_) {
-            return mass(gap(), kept(width_));
+            return detail::normal_mass(gap(), kept(width_));
         }
-        return (real(mass(0, kept(over_sd(centre(), static_cast<double>(lo()))))) +
-                mass(0, kept(over_sd(static_cast<double>(hi()), centre()))))
+        return (real(detail::normal_mass(0, kept(over_sd(centre(), static_cast<double>(lo()))))) +
+                detail::normal_mass(0, kept(over_sd(static_cast<double>(hi()), centre()))))
             .value;
     }
 
@@ -325,20 +318,6 @@ private:
 };
 
 template <detail::portable_real Real>
-constexpr double truncated_normal<Real>::mass(double a, double v) noexcept {
-    if (real(v) * (real(v) * 0.5 + a) > 0.5) {
-        constexpr double root_half = 0x1.6a09e667f3bcdp-1; // sqrt(1/2)
-        constexpr double half_root = 0x1.40d931ff62706p0;  // sqrt(pi / 2)
-        const real far = detail::erfc_scaled((real(root_half) * (real(a) + v)).value);
-        const real near = detail::erfc_scaled((real(root_half) * a).value);
-        return (real(half_root) * (near - far * fall(a, v))).value;
-    }
-    return v == 0 ? 0.0 : (real(v) * detail::mean_on_unit([&](double t) {
-                               return fall(a, detail::held(v * t));
-                           })).value;
-}
-
-template <detail::portable_real Real>
 constexpr double truncated_normal<Real>::density(double x) const {
     detail::number_or_refuse(param_type::law_name, x);
     if (sd() == 0) {
@@ -349,9 +328,10 @@ constexpr double truncated_normal<Real>::density(double x) const {
     if (!(x > low && x < high)) {
         return 0;
     }
-    const double height = holds_mean_
-                              ? fall(0, kept(detail::magnitude(over_sd(x, centre()))))
-                              : fall(gap(), kept(downwards_ ? over_sd(high, x) : over_sd(x, low)));
+    const double height =
+        holds_mean_
+            ? detail::normal_fall(0, kept(detail::magnitude(over_sd(x, centre()))))
+            : detail::normal_fall(gap(), kept(downwards_ ? over_sd(high, x) : over_sd(x, low)));
     if (height == 0) {
         return 0;
     }
@@ -377,12 +357,15 @@ constexpr double truncated_normal<Real>::cumulative(double x) const {
     if (!holds_mean_) {
         const double a = gap();
         const double v = kept(downwards_ ? over_sd(high, x) : over_sd(x, low));
-        below = downwards_ ? real(fall(a, v)) * mass((real(a) + v).value, kept(over_sd(x, low)))
-                           : real(mass(a, v));
+        below = downwards_ ? real(detail::normal_fall(a, v)) *
+                                 detail::normal_mass((real(a) + v).value, kept(over_sd(x, low)))
+                           : real(detail::normal_mass(a, v));
     } else {
         const double z = kept(detail::magnitude(over_sd(x, centre())));
-        below = x < centre() ? real(fall(0, z)) * mass(z, kept(over_sd(x, low)))
-                             : real(mass(0, kept(over_sd(centre(), low)))) + mass(0, z);
+        below = x < centre() ? real(detail::normal_fall(0, z)) *
+                                   detail::normal_mass(z, kept(over_sd(x, low)))
+                             : real(detail::normal_mass(0, kept(over_sd(centre(), low)))) +
+                                   detail::normal_mass(0, z);
     }
     const double chance = (below / whole_mass()).value;
     return chance < std::numeric_limits<double>::min() ? 0.0 : chance > 1 ? 1.0 : chance;
@@ -394,25 +377,10 @@ constexpr double truncated_normal<Real>::quantile(double p) const {
     if (sd() == 0) {
         return centre();
     }
-    // Doubles in order as integers; a step of the bisection halves their number.
-    const auto rank = [](double x) {
-        const auto bits = std::bit_cast<std::int64_t>(x);
-        return bits < 0 ? std::numeric_limits<std::int64_t>::min() - bits : bits;
-    };
-    const auto number = [](std::int64_t r) {
-        return std::bit_cast<double>(r < 0 ? std::numeric_limits<std::int64_t>::min() - r : r);
-    };
-    std::int64_t below = rank(static_cast<double>(first_));
-    std::int64_t above = rank(static_cast<double>(last_));
-    while (below < above) {
-        const std::int64_t middle = (below >> 1) + (above >> 1) + (below & above & 1);
-        if (cumulative(number(middle)) < p) {
-            below = middle + 1;
-        } else {
-            above = middle;
-        }
-    }
-    return detail::into_signed<double>(number(above));
+    const double x =
+        detail::quantile_by_bisection(static_cast<double>(first_), static_cast<double>(last_), p,
+                                      [this](double y) { return cumulative(y); });
+    return detail::into_signed<double>(x);
 }
 
 template <detail::portable_real Real>
