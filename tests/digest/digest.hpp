@@ -79,6 +79,7 @@ void streams();
 void uniform();
 void maths();
 void laws();
+void discrete();
 void regions();
 void bulk();
 

@@ -16,6 +16,7 @@ int main(int count, char** arguments) {
     digests::uniform();
     digests::maths();
     digests::laws();
+    digests::discrete();
     digests::regions();
     digests::bulk();
 }
