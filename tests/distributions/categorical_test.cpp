@@ -1,13 +1,13 @@
 // categorical: fit, outcomes that must never come, what is refused, ISO C++ [rand.req.dist].
 
-#include "bulk/fill_equals_loop.hpp"
 #include "support/alarm_budget.hpp"
 #include "support/seeds.hpp"
 
-#include "leat/bulk/fill.hpp"
 #include "leat/distributions/categorical.hpp"
 #include "leat/engines/xoshiro.hpp"
 #include "leat/testing/engines.hpp"
+#include "leat/uniform/uniform_integer.hpp"
+#include "leat/uniform/unit.hpp"
 
 #include <gtest/gtest.h>
 
@@ -198,13 +198,6 @@ TEST(Categorical, OneWordADraw) {
         words();
     }
     EXPECT_EQ(g, words);
-}
-
-TEST(Categorical, AFillEqualsTheLoop) {
-    std::vector<double> weights(300);
-    std::iota(weights.begin(), weights.end(), 0);
-    expect_every_fill_equals_loop{}("categorical", leat::categorical(weights));
-    expect_every_fill_equals_loop{}("8 bits", leat::categorical<std::uint8_t>({1, 0, 3}));
 }
 
 // Values by hand from the definition.

@@ -1,6 +1,5 @@
 // weighted_index: fit before and after updates, no drift, outcomes that must never come, refusals.
 
-#include "bulk/fill_equals_loop.hpp"
 #include "support/alarm_budget.hpp"
 #include "support/seeds.hpp"
 
@@ -122,12 +121,6 @@ TEST(WeightedIndex, NoWordGivesAnOutcomeOfWeightZero) {
             }
         }
     }
-}
-
-TEST(WeightedIndex, AFillEqualsTheLoop) {
-    leat::weighted_index law({1, 0, 2, 0.25, 8});
-    law.update(0, 3);
-    expect_every_fill_equals_loop{}("weighted_index", law);
 }
 
 TEST(WeightedIndex, AllWeightsMayBeZeroButNotForADraw) {
