@@ -445,6 +445,8 @@ TEST(SmoothRegions, SurfacePointsLieWithinAFewUlp) {
     const sphere<3> s{{0, 0, 0}, 1};
     const sphere<10> high{std::array<double, 10>{}, 1};
     const rotation r;
+    const cap polar{{0, 0, 0}, 1, {1, 2, 3}, 0.01};
+    const torus ring{{0, 0, 0}, 2, 0.5};
     const auto off = [](const auto& p) {
         long double square = 0;
         for (const double x : p) {
@@ -456,6 +458,14 @@ TEST(SmoothRegions, SurfacePointsLieWithinAFewUlp) {
         EXPECT_LE(off(s(g)), 5);
         EXPECT_LE(off(high(g)), 9);
         EXPECT_LE(off(r(g)), 4);
+        const auto q = ring(g);
+        const long double across = std::sqrt(static_cast<long double>(q[0]) * q[0] +
+                                             static_cast<long double>(q[1]) * q[1]) -
+                                   2;
+        const auto tube =
+            static_cast<double>(std::sqrt(across * across + static_cast<long double>(q[2]) * q[2]));
+        EXPECT_LE(std::abs(tube - 0.5) / 0x1p-51, 8); // the outer radius is 2.5
+        EXPECT_LE(off(polar(g)), 6);
         EXPECT_LE(off(von_mises_fisher{{1, 2, 3}, 5}(g)), 6);
         EXPECT_LE(off(lambert_direction{{1, 2, 3}}(g)), 6);
     }

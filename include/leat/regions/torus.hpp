@@ -3,9 +3,9 @@
 //   leat::torus ring{{0, 0, 0}, 2, 0.5};    // centre, radius of the ring, radius of the tube
 //
 // Method: the angle t in the tube has the density (1 + (minor/major) cos t) / (2 pi), the area of a
-// strip of the ring. It comes without rejection: a uniform angle is kept with half that factor as
-// probability, and else reflected to the inner side (exact, since the factors of an angle and of
-// its reflection add up to 2). Never take a uniform tube angle: it crowds points inside the ring.
+// strip of the ring. It comes without rejection: a uniform angle is kept with half of 1 +
+// (minor/major) cos t as its probability, and else reflected, t to pi - t (exact, since the factors
+// of the two add up to 2). Never take a uniform tube angle: it crowds points inside the ring.
 // (Diaconis, Holmes and Shahshahani, Sampling from a manifold, 2013, have the density.)
 //
 // Words, all word64, float included: 6.09 on average: a circle's for the ring, a circle's for the
