@@ -92,10 +92,10 @@ public:
     message& value(unsigned long x) noexcept { return value(static_cast<unsigned long long>(x)); }
     message& value(int x) noexcept { return value(static_cast<long long>(x)); }
     message& value(long x) noexcept { return value(static_cast<long long>(x)); }
-    /// The shortest %g form that reads back as the same double.
+    /// A short %g form that reads back as the same double.
     message& value(double x) noexcept {
         char digits[40];
-        for (int precision = 1; precision <= 17; ++precision) {
+        for (int precision = 6; precision <= 17; ++precision) {
             std::snprintf(digits, sizeof digits, "%.*g", precision, x);
             if (std::strtod(digits, nullptr) == x) {
                 break;
