@@ -54,18 +54,28 @@ template <class Visit>
 void each_law(Visit visit) {
     visit("beta by exponentials", leat::beta{0.3, 0.4});
     visit("beta by gammas", leat::beta{2, 3});
+    visit("cauchy", leat::cauchy{3, 2});
     visit("chi_squared", leat::chi_squared{5});
     visit("chi_squared of 1", leat::chi_squared{1});
+    visit("empirical", leat::empirical({3, 1, 2, 2}));
     visit("erlang", leat::erlang{2, 0.5});
     visit("exponential", leat::exponential{0.25});
     visit("fisher_f", leat::fisher_f{0.7, 9});
     visit("gamma", leat::gamma{2.5, 3});
     visit("gamma of small shape", leat::gamma{0.3, 2});
+    visit("gumbel", leat::gumbel{5, 2});
     visit("inverse_gaussian", leat::inverse_gaussian{3, 0.5});
+    visit("laplace", leat::laplace{2, 0.5});
+    visit("logistic", leat::logistic{-1, 2});
     visit("lognormal", leat::lognormal{2, 0.3});
+    visit("maxwell", leat::maxwell{1.5});
     visit("normal", leat::normal{-3, 0.5});
     visit("normal that is constant", leat::normal{2, 0});
+    visit("pareto", leat::pareto{2, 3});
+    visit("piecewise_linear", leat::piecewise_linear({0, 1, 3}, {0, 1, 0.5}));
+    visit("rayleigh", leat::rayleigh{1.5});
     visit("student_t", leat::student_t{4.5});
+    visit("triangular", leat::triangular{-1, 0, 4});
     visit("truncated_normal, far", leat::truncated_normal{0, 1, 3, 9});
     visit("truncated_normal, narrow", leat::truncated_normal{0, 1, -0.5, 0.5});
     visit("truncated_normal, wide", leat::truncated_normal{0, 1, -0.5, 4});
@@ -79,8 +89,10 @@ void each_law(Visit visit) {
     visit("weighted_index", leat::weighted_index({1, 0, 2, 0.25, 8}));
     visit("float exponential", leat::exponential<float>{3});
     visit("float gamma", leat::gamma<float>{40, 0.5});
+    visit("float laplace", leat::laplace<float>{2, 0.5});
     visit("float lognormal", leat::lognormal<float>{-1, 2});
     visit("float normal", leat::normal<float>{10, 2});
+    visit("float rayleigh", leat::rayleigh<float>{1.5});
     visit("float weibull", leat::weibull<float>{0.5, 2});
 }
 
@@ -90,11 +102,6 @@ void each_region(Visit visit) {
     visit("disk", leat::disk{{3, 4}, 2.5});
     visit("ellipse", leat::ellipse{{0, 0}, 8.5, 3.2, 0.4});
     visit("float disk", leat::disk<float>{{3, 4}, 2.5F});
-}
-
-} // namespace leat_test
-
-#endif
     visit("box", leat::box<3>{{0, 0, -4}, {60, 12.5, 0}});
     visit("float box", leat::box<2, float>{{0, 0}, {60, 12.5}});
     visit("ball", leat::ball<3>{{1, 2, 3}, 2.5});
@@ -105,3 +112,8 @@ void each_region(Visit visit) {
     visit("torus", leat::torus{{1, 2, 3}, 2, 0.7});
     visit("rotation", leat::rotation{});
     visit("affine image", leat::affine_image{leat::disk{{0, 0}, 1}, {{{1, 3}, {-2, 4}}}, {3, 4}});
+}
+
+} // namespace leat_test
+
+#endif
