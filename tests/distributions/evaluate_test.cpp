@@ -16,6 +16,7 @@
 #include "leat/distributions/piecewise_linear.hpp"
 #include "leat/distributions/rayleigh.hpp"
 #include "leat/distributions/triangular.hpp"
+#include "leat/distributions/truncated_normal.hpp"
 #include "leat/distributions/weibull.hpp"
 #include "leat/distributions/with_boost_math.hpp"
 #include "support/reference.hpp"
@@ -174,7 +175,21 @@ TEST(Evaluate, PublishedValues) {
     });
 }
 
-/// P(X <= x) and the density of a law by their definition, to compare with.
+// Those that Boost.Math answers for, against mpmath.
+TEST(Evaluate, PublishedValuesOfTheGammaFamily) {
+    expect_published("chi2", 1e-12,
+                     [](const json& p) { return leat::chi_squared{number(p["nu"])}; });
+    expect_published("student", 1e-12,
+                     [](const json& p) { return leat::student_t{number(p["nu"])}; });
+    expect_published("f", 1e-12, [](const json& p) {
+        return leat::fisher_f{number(p["d1"]), number(p["d2"])};
+    });
+    expect_published("beta", 1e-12, [](const json& p) {
+        return leat::beta{number(p["a"]), number(p["b"])};
+    });
+}
+
+// x^2 / (2 scale^2) is a gamma variate of shape 3/2.
 TEST(Evaluate, MaxwellIsTheRootOfAGamma) {
     for (const double scale : {1.0, 0.37, 1e-150}) {
         const leat::maxwell law{scale};
@@ -318,6 +333,13 @@ TEST(Evaluate, EndsRefusalsAndSlopes) {
     expect_sound(leat::triangular{-1, 0.5, 3}, -1, 3);
     expect_sound(leat::triangular{-1, 3, 3}, -1, 3);
     expect_sound(leat::piecewise_linear{{0, 1, 3}, {0, 1, 0.5}}, 0, 3);
+    expect_sound(leat::erlang{3, 2}, 0, infinity);
+    expect_sound(leat::chi_squared{5}, 0, infinity);
+    expect_sound(leat::beta{2, 3}, 0, 1);
+    expect_sound(leat::student_t{4}, -infinity, infinity);
+    expect_sound(leat::fisher_f{3, 4}, 0, infinity);
+    expect_sound(leat::inverse_gaussian{2, 3}, 0, infinity);
+    expect_sound(leat::truncated_normal{0, 1, -1, 2}, -1, 2);
     expect_sound(leat::normal<float>{1, 2}, -infinity, infinity);
 }
 
