@@ -184,7 +184,7 @@ private:
         const auto own = static_cast<Word>(word >> rest_bits);
         const Word entry = columns[own];
         const auto alias = static_cast<Word>(entry >> rest_bits);
-        return (word & mask) < (entry & mask) ? own : alias;
+        return static_cast<std::size_t>((word & mask) < (entry & mask) ? own : alias);
     }
     [[nodiscard]] constexpr Word column(std::size_t alias, Word threshold) const noexcept {
         return static_cast<Word>((static_cast<Word>(alias) << rest_bits_) | threshold);
