@@ -2,6 +2,7 @@
 // it (P3, P5, P8). A law joins by one line in `laws`: a parameter set that is not its default one.
 
 #include "leat/distributions/beta.hpp"
+#include "leat/distributions/categorical.hpp"
 #include "leat/distributions/cauchy.hpp"
 #include "leat/distributions/chi_squared.hpp"
 #include "leat/distributions/empirical.hpp"
@@ -114,6 +115,9 @@ using laws = ::testing::Types<
         return leat::empirical_parameters<float>{.values = {0.5F, 3}};
     })>,
     law_case<decltype([] {
+        return leat::categorical_parameters<>{.weights = {3, 0, 0.5, 1e-3}};
+    })>,
+    law_case<decltype([] {
         return leat::piecewise_linear_parameters<double>{.points = {0, 1, 3},
                                                          .densities = {0, 1, 0.5}};
     })>,
@@ -126,7 +130,8 @@ using laws = ::testing::Types<
 template <class Parameters>
 constexpr bool holds_a_list() {
     return requires(Parameters p) { p.values; }
-    || requires(Parameters p) { p.points; };
+    || requires(Parameters p) { p.points; }
+    || requires(Parameters p) { p.weights; };
 }
 
 template <class Case>
