@@ -16,6 +16,7 @@
 #include "leat/regions/disk.hpp"
 #include "leat/regions/ellipse.hpp"
 #include "leat/regions/ellipsoid.hpp"
+#include "leat/regions/polygon.hpp"
 #include "leat/regions/polyline.hpp"
 #include "leat/regions/rejection.hpp"
 #include "leat/regions/rotation.hpp"
@@ -26,5 +27,6 @@
 #include "leat/regions/sphere.hpp"
 #include "leat/regions/torus.hpp"
 #include "leat/regions/triangle.hpp"
+#include "leat/regions/triangle_mesh.hpp"
 
 #endif
