@@ -29,6 +29,7 @@
 #include "leat/uniform/unit.hpp"
 #include "leat/uniform/words.hpp"
 
+#include <bit>
 #include <cstddef>
 #include <cstdint>
 #include <limits>
@@ -181,10 +182,12 @@ private:
             const double left = sums_[node];
             // Rounding may have put the place at the very end of a sum, or beyond: hence the second
             // condition. The chosen part is never 0.
-            if (!(place.value < left) && sums_[node + 1] > 0) {
-                place = place - left;
-                ++node;
-            }
+            // No branch: it would be a coin toss.
+            const std::uint64_t right = static_cast<std::uint64_t>(!(place.value < left)) &
+                                        static_cast<std::uint64_t>(sums_[node + 1] > 0);
+            const std::uint64_t taken = std::bit_cast<std::uint64_t>(left) & (0 - right);
+            place = place - std::bit_cast<double>(taken);
+            node += static_cast<std::size_t>(right);
         }
         return static_cast<Int>(node - leaves_);
     }
