@@ -7,7 +7,7 @@
 // names the entry, and so do more outcomes than the integer type can number. A draw takes constant
 // time and one word64; an outcome of weight 0 is never drawn. The chances are right to about 2^-64
 // (uniform/alias_table.hpp says how exactly): an outcome of a chance below that may never come.
-// Constructing is linear in n, at some 30 ns a weight; the law holds the weights and 8 to 16 bytes
+// Constructing is linear in n, at some 40 ns a weight; the law holds the weights and 8 to 16 bytes
 // for each. Copying copies all of it.
 // Source: Walker, ACM TOMS 3(3), 1977; Vose, IEEE Trans. Software Eng. 17(9), 1991.
 // Not for weights that change (weighted_index), nor for equal ones (uniform_integer).
