@@ -80,6 +80,11 @@ TEST(FillEqualsLoop, TablesAndSingleDrawsDecideAlike) {
     expect_long_fill_equals_loop(leat::hypergeometric{20, 15, 10});
     expect_long_fill_equals_loop(leat::hypergeometric{0, 0, 0});
     expect_long_fill_equals_loop(leat::hypergeometric{39, 20, 19});
+    expect_long_fill_equals_loop(leat::hypergeometric{40, 20, 20});
+    expect_long_fill_equals_loop(leat::hypergeometric{1000, 300, 100});
+    expect_long_fill_equals_loop(leat::hypergeometric{100000, 60000, 70000});
+    constexpr std::int64_t two_to_53 = std::int64_t{1} << 53;
+    expect_long_fill_equals_loop(leat::hypergeometric{two_to_53, two_to_53 / 3, two_to_53 / 5});
 }
 
 } // namespace
