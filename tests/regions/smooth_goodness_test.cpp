@@ -151,13 +151,20 @@ void check_shell(const std::string& id, const char* content) {
     facts.mean("second_moment_each_coordinate", r, first_square);
 }
 
-TEST(SmoothGoodness, AnnulusThin) { check_shell<leat::annulus<>>("regions.annulus.1.2", "area"); }
-TEST(SmoothGoodness, AnnulusThick) {
+TEST(SmoothGoodness, Annulus) { check_shell<leat::annulus<>>("regions.annulus.1.2", "area"); }
+TEST(SmoothGoodness, AnnulusOfASmallHollow) {
     check_shell<leat::annulus<>>("regions.annulus.0.1.5", "area");
 }
-TEST(SmoothGoodness, ShellThick) { check_shell<leat::shell<3>>("regions.shell.1.2", "volume"); }
+TEST(SmoothGoodness, Shell) { check_shell<leat::shell<3>>("regions.shell.1.2", "volume"); }
 TEST(SmoothGoodness, ShellThin) {
     check_shell<leat::shell<3>>("regions.shell.0.5.0.75", "volume");
+    // thinner than outer / N, where the other method takes over
+    check_uniform(leat::shell<3>{{0, 0, 0}, 1.5, 2},
+                  [](const auto& p) { return shell_numbers<3>(p, 1.5, 2); });
+    check_uniform(leat::shell<5>{{0, 0, 0, 0, 0}, 1.7, 2},
+                  [](const auto& p) { return shell_numbers<5>(p, 1.7, 2); });
+    check_uniform(leat::annulus{{0, 0}, 1.2, 2},
+                  [](const auto& p) { return shell_numbers<2>(p, 1.2, 2); });
     // so thin that the radius itself is uniform
     const leat::shell<3> thinnest{{0, 0, 0}, 1, 1 + 1e-9};
     check_uniform(
@@ -365,10 +372,10 @@ TEST(SmoothGoodness, VonMisesFisher) {
         facts.mean("second_moment_z", law, [&](const auto& p) { return third_square(frame(p)); });
         facts.mean("second_moment_x", law, [&](const auto& p) { return first_square(frame(p)); });
     }
-    const leat::von_mises_fisher weak{{2, 1, -2}, 0.1}; // the other branch
+    const leat::von_mises_fisher weak{{2, 1, -2}, 0.45}; // the other branch
     check_uniform(weak, [&](const auto& p) {
         const auto [x, y, z] = frame(p);
-        return unit_numbers<2>{std::expm1(-0.1 * (1 - z)) / std::expm1(-0.2), turn_of(y, x)};
+        return unit_numbers<2>{std::expm1(-0.45 * (1 - z)) / std::expm1(-0.9), turn_of(y, x)};
     });
 }
 
