@@ -139,9 +139,6 @@ void expect_published(const std::string& family, double tolerance, Make make) {
 }
 
 TEST(Evaluate, PublishedValues) {
-    const auto located = [](const json& p, auto made) {
-        return decltype(made){number(p["location"]), number(p["scale"])};
-    };
     expect_published("normal", 1e-14, [](const json& p) {
         return leat::normal{number(p["mean"]), number(p["sd"])};
     });

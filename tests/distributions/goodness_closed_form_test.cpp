@@ -1,5 +1,5 @@
 // The laws drawn in closed form against Boost.Math and the published quantiles, a million draws
-// each, and their far tails; the faults that would cut those tails are planted.
+// each, and their far tails, which the words alone would cut off.
 
 #include "distributions/law_report.hpp"
 #include "support/alarm_budget.hpp"
@@ -28,7 +28,11 @@
 #include <boost/math/special_functions/gamma.hpp>
 #include <gtest/gtest.h>
 
+#include <algorithm>
 #include <cmath>
+#include <cstdint>
+#include <string>
+#include <vector>
 
 namespace {
 
@@ -270,11 +274,11 @@ TEST(ClosedFormGoodness, LogisticTails) {
     }
 }
 
-// Values beyond 10^k come with probability 2 arctan(10^-k) / pi, however large: with a Z' near 0.
+// The denominator, where it is below 2^-8, has the half normal law on that condition.
 TEST(ClosedFormGoodness, CauchyTail) {
     auto g = source_of_this_test().stream("tail");
     std::vector<double> x(many / 4);
-    for (double& value : x) { // Z' has the law of |Z| below 2^-8: |Z| / erf(2^-8.5) uniform, nearly
+    for (double& value : x) {
         struct second_in_tail {
             static constexpr std::uint64_t min() { return 0; }
             static constexpr std::uint64_t max() { return ~std::uint64_t{0}; }
