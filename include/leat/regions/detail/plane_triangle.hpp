@@ -87,9 +87,8 @@ struct plane_triangle {
         return turn(a, b, q) >= 0 && turn(b, c, q) >= 0 && turn(c, a, q) >= 0;
     }
 
-    /// A uniform point, as one of the region whose frame it is. Where rounding puts it outside it
-    /// is drawn anew. A sliver of a larger region, so thin that hardly a number lies in it, may end
-    /// as its corner a.
+    /// A uniform point. Where rounding puts it outside it is drawn anew. A sliver of a larger
+    /// region, so thin that hardly a number lies in it, may end as its corner a.
     template <portable_real Real, random_words G>
     [[nodiscard]] constexpr std::array<Real, 2> draw(const plane_frame<Real>& frame, G& g) const {
         for (int trial = 0; trial < rounding_trials; ++trial) {
