@@ -11,6 +11,7 @@
 #ifndef LEAT_SELF_CHECK_GOLDEN_HPP
 #define LEAT_SELF_CHECK_GOLDEN_HPP
 
+#include "leat/bulk.hpp"
 #include "leat/distributions.hpp"
 #include "leat/engines.hpp"
 #include "leat/regions.hpp"
@@ -78,7 +79,7 @@ public:
     }
     /// What is drawn from an engine by draw(g).
     template <class Draw>
-    void draws(const char* name, std::uint64_t expected, Draw draw) {
+    void draws(const char* name, std::uint64_t expected, Draw&& draw) {
         compute(name, expected, [&](golden_digest& d) {
             xoshiro256_plus_plus g{seed_};
             for (int i = 0; i < golden_draws; ++i) {
@@ -244,11 +245,96 @@ inline void each_golden(golden_line line, void* context) {
         return truncated_normal{1, 2, 5, 9};
     });
     golden.sampler("von_mises", 0x971daea422a60d3du, [] { return von_mises{-2, 2.5}; });
+    golden.sampler("bernoulli", 0xf3d8514f6c59a23bu, [] { return bernoulli{0.3}; });
+    golden.sampler("binomial.inversion", 0x367a3faed4c53e65u, [] { return binomial{20, 0.3}; });
+    golden.sampler("binomial.rejection", 0x64ffe8f6ebf69e34u, [] { return binomial{1000, 0.3}; });
+    golden.sampler("categorical", 0x440c6e729e5bc3bbu, [] {
+        return categorical{{1, 0, 2.5, 1e-3}};
+    });
+    golden.sampler("cauchy", 0xfc61b1459e2eb1efu, [] { return cauchy{3, 2}; });
+    golden.sampler("dirichlet", 0x12cd67069db979adu, [] { return dirichlet{{0.2, 1, 3.5}}; });
+    golden.sampler("empirical", 0x8d186e523679cdfbu, [] { return empirical{{3, 1, 2, 2.5}}; });
+    golden.sampler("geometric", 0xcc5bd18cc2a00bfcu, [] { return geometric{0.01}; });
+    golden.sampler("gumbel", 0x7cce60b29aae0e80u, [] { return gumbel{5, 2}; });
+    golden.sampler("hypergeometric.small", 0x81f046d332cd9f2du, [] {
+        return hypergeometric{60, 20, 10};
+    });
+    golden.sampler("hypergeometric.large", 0x16d38fd045da6eb5u, [] {
+        return hypergeometric{100000, 30000, 5000};
+    });
+    golden.sampler("laplace", 0x25b42da122bbebeau, [] { return laplace{2, 0.5}; });
+    golden.sampler("logistic", 0x0ff770b979e9e980u, [] { return logistic{-1, 2}; });
+    golden.sampler("maxwell", 0x8b8835412cb4c186u, [] { return maxwell{1.5}; });
+    golden.sampler("multinomial", 0xf5584d5e58fa223fu, [] { return multinomial{100, {1, 2, 3}}; });
+    golden.sampler("multivariate_normal", 0x07ec2223f01244fau, [] {
+        return multivariate_normal{{1, -2}, {{4, 1.2}, {1.2, 1}}};
+    });
+    golden.sampler("negative_binomial", 0x8935948cc66e21a5u, [] {
+        return negative_binomial{2.5, 0.2};
+    });
+    golden.sampler("pareto", 0x7c517e3acc36d21bu, [] { return pareto{2, 1.5}; });
+    golden.sampler("piecewise_linear", 0xcc1f726c12fc7d6au, [] {
+        return piecewise_linear{{0, 1, 3}, {0, 1, 0.5}};
+    });
+    golden.sampler("poisson.inversion", 0x148b81726ff1adc2u, [] { return poisson{4.5}; });
+    golden.sampler("poisson.rejection", 0x859e48824ad64a7du, [] { return poisson{1000.5}; });
+    golden.sampler("rayleigh", 0x8ac849264f1bb9b8u, [] { return rayleigh{1.5}; });
+    golden.sampler("triangular", 0x84eaba49c225b068u, [] { return triangular{-1, 0.5, 4}; });
+    golden.sampler("weighted_index", 0x4cf4f13f33801085u, [] {
+        return weighted_index{{1, 0, 2, 0.25, 8}};
+    });
+    golden.sampler("zipf", 0x5b088ccd68b9bd5eu, [] { return zipf{1.1, 1000}; });
     golden.sampler("weibull.double", 0x13efbf2f69acffa5u, [] { return weibull{2.3, 1500}; });
     golden.sampler("weibull.float", 0x912d4ba50b12fee9u, [] { return weibull<float>{1.5f, 2.0f}; });
 
     golden.sampler("disk", 0x12b89d7c2c4ecb47u, [] { return disk{{1e6, -3e5}, 0.7}; });
     golden.sampler("ellipse", 0x1d4db3355e30491du, [] { return ellipse{{-1, 0.3}, 5, 2, 0.6}; });
+    golden.sampler("affine_image", 0x41c3a483b0e37c27u, [] {
+        return affine_image{
+            ball<3>{{0, 0, 0}, 1}, {{{2, 0, 1}, {0, 1, 0}, {0, 0.5, 3}}}, {1, 2, 3}};
+    });
+    golden.sampler("annulus", 0x51801ecd39cbb434u, [] { return annulus{{1, 2}, 0.5, 2}; });
+    golden.sampler("ball.3", 0xf7c9821b76a4e6afu, [] { return ball{{1, 2, 3}, 0.7}; });
+    golden.sampler("ball.6", 0xcc1471375bddcc58u, [] { return ball{{0, 0, 0, 0, 0, 0}, 2}; });
+    golden.sampler("box", 0xfe7ac2ad0d51b100u, [] { return box{{0, 1, 2}, {3, 5, 9}}; });
+    golden.sampler("cap", 0x6c0203abe69c7484u, [] { return cap{{0, 0, 0}, 2, {1, -2, 0.5}, 0.7}; });
+    golden.sampler("cone", 0x3b457a731e3b18beu, [] { return cone{{0, 0, 0}, {1, -2, 0.5}, 2, 3}; });
+    golden.sampler("cylinder", 0xb6d140086e3d6211u, [] {
+        return cylinder{{0, 0, 0}, {1, -2, 0.5}, 2, 3};
+    });
+    golden.sampler("direction", 0xbc66eb4ab99f6aebu, [] {
+        return von_mises_fisher{{1, -2, 0.5}, 7};
+    });
+    golden.sampler("ellipsoid", 0x6ecfa5132ae5c8f2u, [] {
+        return ellipsoid{{0, 0, 0}, {1, 2, 3}};
+    });
+    golden.sampler("float", 0x366690697a5b9d95u, [] { return ball<3, float>{{0, 0, 0}, 1}; });
+    golden.sampler("polyline", 0x99b12277b9b5bb2au, [] {
+        return polyline<2>{{{0, 0}, {1, 1}, {3, 0}}};
+    });
+    golden.sampler("rotation", 0x00260eb1389acb02u, [] { return rotation{}; });
+    golden.sampler("sector", 0xf50371fbfdd17956u, [] { return sector{{0, 0}, 2, 0.3, 1.9}; });
+    golden.sampler("segment", 0x0b4aa81c61552d1fu, [] { return segment{{0, 0, 0}, {1, 2, 3}}; });
+    golden.sampler("shell", 0x730c4a944cad028bu, [] { return shell{{0, 0, 0}, 1, 1.5}; });
+    golden.sampler("sphere.3", 0x3f884639e907fd3cu, [] { return sphere{{0, 0, 0}, 2}; });
+    golden.sampler("sphere.5", 0x251a183a0ff80121u, [] { return sphere{{0, 0, 0, 0, 0}, 2}; });
+    golden.sampler("torus", 0x7db62a0abda2e9f1u, [] { return torus{{0, 0, 0}, 3, 1}; });
+
+    golden.draws("fill.braid", 0xa348607007811b1fu, [braid = xoshiro256_braid(1)](auto&) mutable {
+        std::array<double, 20> values{};
+        fill(values, uniform{0, 0.3}, braid);
+        return values;
+    });
+    golden.draws("fill.stream", 0xf043eb336892ae64u, [words = source(1).stream()](auto&) mutable {
+        std::array<double, 20> values{};
+        fill(values, normal{0, 1}, words);
+        return values;
+    });
+    golden.draws("fill_chunks", 0x6c67ffae8a1ffbe6u, [i = 0](auto&) mutable {
+        std::array<double, 3> values{};
+        fill_chunks(values, exponential{1}, source(1).branch(++i));
+        return values;
+    });
 }
 
 /// Adds every digest that is not what it must be.
