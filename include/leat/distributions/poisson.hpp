@@ -7,7 +7,7 @@
 // Domain: mean >= 0, and such that a draw passes the integer type with a chance of at most 2^-64;
 // for std::int64_t some 9.2e18. Anything else throws invalid_parameter. Mean 0 gives 0.
 // A draw consumes one word64 below a mean of 10 (inversion; small words are large values), else two
-// a trial, 2.3 to 2.6 on average; engine_stuck after 64 trials. Methods, exactness and sources:
+// a trial, 2.3 to 2.7 on average; engine_stuck after 64 trials. Methods, exactness and sources:
 // detail/discrete_poisson.hpp and detail/discrete_inversion.hpp. Where a draw would pass the type's
 // largest value it is that value (inversion) or is not made (rejection).
 // Constructing costs an exponential function or a square root: cheap enough for one an event.
