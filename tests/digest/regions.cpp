@@ -53,6 +53,19 @@ void regions() {
     region("affine_image", leat::affine_image{leat::ball<3>{{0, 0, 0}, 1},
                                               {{{2, 0, 0.5}, {0, 1, 1}, {0.25, 0, -1}}},
                                               {7, 8, 9}});
+    region("triangle", leat::triangle{{0, 0}, {4, 0.5}, {1, 3}});
+    region("tetrahedron", leat::tetrahedron{{1, 2, 3}, {4, 2, 3}, {1, 7, 3}, {2, 2, 5}});
+    region("simplex.5", leat::simplex<5>{});
+    using ring = std::vector<std::array<double, 2>>;
+    const leat::polygon field{ring{{0, 0}, {6, -1}, {5, 4}, {3, 1.5}, {1, 4}},
+                              {ring{{2, 0.5}, {2, 1}, {3, 1}}}};
+    region("polygon", field);
+    region("triangle_mesh", leat::triangle_mesh<>{{{0, 0, 0}, {1, 0, 0}, {0, 2, 0}, {0, 0, 3}},
+                                                  {{0, 1, 2}, {0, 1, 3}, {0, 2, 3}, {1, 2, 3}}});
+    region("either", leat::either{leat::disk{{0, 0}, 2}, leat::box<2>{{5, 0}, {7, 3}}});
+    region("without", leat::without{leat::box<2>{{0, 0}, {4, 4}}, leat::disk{{2, 2}, 1}, 12.8584});
+    region("float.triangle", leat::triangle<float>{{0, 0}, {4, 0.5}, {1, 3}});
+    region("float.polygon", leat::polygon<float>{{{0, 0}, {6, -1}, {5, 4}, {3, 1.5}}});
     region("float.ball", leat::ball<3, float>{{1, 2, 3}, 2.5});
     region("float.sphere", leat::sphere<3, float>{{1, 2, 3}, 2.5});
     region("float.cylinder", leat::cylinder<float>{{1, 2, 3}, {1, -2, 0.5}, 0.3, 20});

@@ -58,6 +58,9 @@ struct draws_inside {
 
 TEST(EveryFlatRegion, ContainsEveryPointDrawn) { leat_test::each_flat_region(draws_inside{}); }
 TEST(EveryRoundRegion, ContainsEveryPointDrawn) { leat_test::each_round_region(draws_inside{}); }
+TEST(EveryCorneredRegion, ContainsEveryPointDrawn) {
+    leat_test::each_cornered_region(draws_inside{});
+}
 
 // P5, P3 and P8: other engines serve, broken ones end with engine_stuck or a point inside; nothing
 // infinite or NaN is contained; a draw changes nothing, and gives the same as another type.
@@ -121,5 +124,6 @@ struct behaves {
 
 TEST(EveryFlatRegion, BehavesWithAnyEngine) { leat_test::each_flat_region(behaves{}); }
 TEST(EveryRoundRegion, BehavesWithAnyEngine) { leat_test::each_round_region(behaves{}); }
+TEST(EveryCorneredRegion, BehavesWithAnyEngine) { leat_test::each_cornered_region(behaves{}); }
 
 } // namespace

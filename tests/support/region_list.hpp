@@ -127,10 +127,76 @@ void each_round_region(Visit visit) {
                   ball{{0, 0, 0}, 1}, {{{2, 0, 0.5}, {0, 1, 1}, {0, 0, -1}}}, {7, 8, 9}}});
 }
 
+/// A predicate for `rejection`.
+struct signs_differ {
+    bool operator()(const std::array<double, 2>& p) const { return p[0] * p[1] < 0; }
+    friend bool operator==(const signs_differ&, const signs_differ&) = default;
+};
+
+/// Shapes with corners, and those made of other regions.
+template <class Visit>
+void each_cornered_region(Visit visit) {
+    using namespace leat;
+    visit_all(visit, "triangle",
+              std::vector{triangle{{0, 0}, {4, 0}, {1, 3}}, triangle{{0, 0}, {0, 1}, {1, 0}},
+                          triangle{{1e15, 0}, {1e15 + 300, 1}, {1e15, 300}},
+                          triangle{{-1.5e308, 0}, {1.5e308, 0}, {0, 1.7e308}},
+                          triangle{{0, 0}, {0x1p-959, 0}, {0, 0x1p-959}},
+                          triangle{{0, 0}, {1, 1}, {1, 1 + 1e-11}}});
+    visit_all(visit, "triangle<float>",
+              std::vector{triangle<float>{{0, 0}, {4, 0}, {1, 3}},
+                          triangle<float>{{1e6, 0}, {1e6 + 100, 1}, {1e6, 50}}});
+    visit_all(visit, "tetrahedron",
+              std::vector{tetrahedron{{0, 0, 0}, {1, 0, 0}, {0, 1, 0}, {0, 0, 1}},
+                          tetrahedron{{1e100, 0, 0}, {0, 1, 0}, {0, 0, 1e-10}, {0, 0, 0}}});
+    visit_all(visit, "tetrahedron<float>",
+              std::vector{tetrahedron<float>{{9, 0, 0}, {1, 0, 0}, {0, 1, 0}, {0, 0, 1}}});
+    visit_all(visit, "simplex<1>", std::vector{simplex<1>{}});
+    visit_all(visit, "simplex<3>", std::vector{simplex<3>{}});
+    visit_all(visit, "simplex<3, float>", std::vector{simplex<3, float>{}});
+    visit_all(visit, "simplex<2>",
+              std::vector{simplex<2>{{{{1e15, 0}, {1e15 + 1e4, 0}, {1e15, 1}}}}});
+    using ring = std::vector<std::array<double, 2>>;
+    const ring square{{0, 0}, {0, 4}, {4, 4}, {4, 0}};
+    const ring hole{{1, 1}, {2, 1}, {2, 3}};
+    ring comb;
+    for (int i = 0; i < 1000; ++i) {
+        comb.push_back({static_cast<double>(i), i % 2 == 0 ? 1e-3 : 1.0});
+    }
+    comb.push_back({999, 0});
+    comb.push_back({0, 0});
+    visit_all(visit, "polygon",
+              std::vector{polygon{square}, polygon{square, {hole}}, polygon{comb},
+                          polygon<>{{{0, 0}, {1.7e308, 0}, {-1.7e308, 1e300}}},
+                          polygon<>{{{1e15, 0}, {1e15 + 300, 1}, {1e15, 300}}},
+                          polygon<>{{{0, 0}, {0x1p-959, 0}, {0, 0x1p-959}}}});
+    visit_all(visit, "polygon<float>",
+              std::vector{polygon<float>{{{0, 0}, {7, 1}, {3, 3}, {1, 0.5}}}});
+    const std::vector<std::array<double, 3>> corners{{0, 0, 0}, {1, 0, 0}, {0, 1, 0}, {0, 0, 1}};
+    visit_all(
+        visit, "triangle_mesh",
+        std::vector{triangle_mesh{corners, {{0, 1, 2}, {1, 3, 2}, {0, 0, 0}}},
+                    triangle_mesh<>{{{0, 0, 0}, {1e300, 0, 0}, {0, 1e300, 1e299}}, {{0, 1, 2}}},
+                    triangle_mesh<>{{{5, 5, 1e15}, {600, 5, 1e15}, {5, 600, 1e15}}, {{0, 1, 2}}}});
+    visit_all(visit, "triangle_mesh<float>",
+              std::vector{triangle_mesh<float>{{{0, 0, 0}, {1, 2, 3}, {1, 0, 1}}, {{0, 1, 2}}}});
+    visit_all(visit, "rejection",
+              std::vector{rejection{disk{{0, 0}, 1}, signs_differ{}, 1.5707963267948966}});
+    visit_all(visit, "without",
+              std::vector{without{box{{0, 0}, {4, 4}}, disk{{2, 2}, 1}, 12.858407346410207}});
+    visit_all(
+        visit, "either",
+        std::vector{either{disk{{-5, 0}, 1}, box{{0, 0}, {1, 2}},
+                           without{box{{2, 0}, {6, 4}}, disk{{4, 2}, 1}, 12.858407346410207}}});
+    visit_all(visit, "either<segment>",
+              std::vector{either{segment{{0, 0}, {1, 1}}, segment{{2, 3}, {2, 9}}}});
+}
+
 template <class Visit>
 void each_region_sample(Visit visit) {
     each_flat_region(visit);
     each_round_region(visit);
+    each_cornered_region(visit);
 }
 
 } // namespace leat_test

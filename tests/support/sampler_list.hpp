@@ -112,6 +112,13 @@ void each_region(Visit visit) {
     visit("torus", leat::torus{{1, 2, 3}, 2, 0.7});
     visit("rotation", leat::rotation{});
     visit("affine image", leat::affine_image{leat::disk{{0, 0}, 1}, {{{1, 3}, {-2, 4}}}, {3, 4}});
+    visit("triangle", leat::triangle{{0, 0}, {4, 0}, {1, 3}});
+    visit("simplex", leat::simplex<4>{});
+    visit("float polygon", leat::polygon<float>{{{0, 0}, {7, 1}, {3, 3}, {1, 0.5}}});
+    visit("polygon", leat::polygon<>{{{0, 0}, {7, 1}, {3, 3}, {1, 0.5}}});
+    visit("triangle_mesh", leat::triangle_mesh<>{{{0, 0, 0}, {1, 2, 3}, {1, 0, 1}}, {{0, 1, 2}}});
+    visit("either", leat::either{leat::disk{{0, 0}, 1}, leat::box{{2, 2}, {3, 4}}});
+    visit("without", leat::without{leat::box{{0, 0}, {1, 1}}, leat::disk{{0, 0}, 1}});
 }
 
 } // namespace leat_test

@@ -12,8 +12,9 @@
 // Words: N word64, float included. Time grows as N^2: for a hundred dimensions and more take
 // exponentials over their sum. Rounding: every point drawn is contained. Domain: corners finite;
 // half the width in each coordinate at least 2^-960 (2^-100 for float) and 256 steps between
-// neighbouring numbers; the corners not so nearly in one plane that rounding would spoil it.
-// Units: those of the corners. Errors: invalid_parameter; engine_stuck.
+// neighbouring numbers; the corners not so nearly in one plane that rounding would spoil it. A
+// coordinate below 2^-400 of the largest counts as 0. Units: those of the corners. Errors:
+// invalid_parameter; engine_stuck.
 
 #ifndef LEAT_REGIONS_SIMPLEX_HPP
 #define LEAT_REGIONS_SIMPLEX_HPP
