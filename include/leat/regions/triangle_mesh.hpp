@@ -1,7 +1,8 @@
 // The triangle mesh: points uniform by area on a surface in space that is made of triangles.
 //
 //   leat::triangle_mesh hull{vertices, triples};   // std::vector of std::array<double, 3>, and of
-//                                                  // std::array<std::uint32_t, 3>
+//                                                  // std::array<std::uint32_t, 3> (or of
+//                                                  // another integer type)
 //
 // Method: a triangle is chosen by its area in constant time (alias table), then a point of it is
 // drawn by folding as in `triangle`. Never choose a triangle without regard to its area, nor weigh
@@ -29,9 +30,10 @@
 #include "leat/uniform/unit.hpp"
 
 #include <array>
+#include <concepts>
 #include <cstddef>
 #include <cstdint>
-#include <utility> // move
+#include <utility> // in_range, move
 #include <vector>
 
 namespace leat {
@@ -63,6 +65,13 @@ public:
                                   detail::power_of_two<double>(-exponent_));
         weigh();
     }
+
+    /// The same with indices of another integer type; one that does not fit is refused.
+    template <std::integral Index>
+    requires(!std::same_as<Index, std::uint32_t>)
+        triangle_mesh(std::vector<std::array<Real, 3>> vertices,
+                      const std::vector<std::array<Index, 3>>& triangles)
+        : triangle_mesh(std::move(vertices), as_indices(triangles)) {}
 
     /// A point uniform by area.
     template <random_words G>
@@ -116,6 +125,22 @@ public:
 private:
     using typename base::real;
     using vector = std::array<double, 3>;
+
+    template <class Index>
+    static std::vector<indices> as_indices(const std::vector<std::array<Index, 3>>& triangles) {
+        std::vector<indices> converted(triangles.size());
+        for (std::size_t t = 0; t < triangles.size(); ++t) {
+            for (std::size_t i = 0; i < 3; ++i) {
+                converted[t][i] = static_cast<std::uint32_t>(triangles[t][i]);
+                if (!std::in_range<std::uint32_t>(triangles[t][i])) {
+                    detail::refuse_entry("triangle_mesh", "triangles", t, i,
+                                         static_cast<double>(triangles[t][i]),
+                                         "must be below the number of vertices");
+                }
+            }
+        }
+        return converted;
+    }
 
     void require_triangles() const {
         for (const point_type& p : vertices_) {
