@@ -430,44 +430,44 @@ TEST(RefusedRegions, CornersAndCombinations) {
             leat::triangle_mesh{corners, {{0, 1, 3}}};
         },
         "leat::triangle_mesh: triangles[0][2] = 3, must be below the number of vertices");
+    expect_refused(
         [&] {
-        leat::triangle_mesh{corners, std::vector<std::array<int, 3>>{{0, 1, -1}}};
+            leat::triangle_mesh{corners, std::vector<std::array<int, 3>>{{0, 1, -1}}};
         },
         "leat::triangle_mesh: triangles[0][2] = -1, must be below the number of vertices");
-        expect_refused(
-            [&] {
-                leat::triangle_mesh{corners, {}};
-            },
-            "leat::triangle_mesh: triangles.size() = 0, must be from 1 to 2^32");
-        expect_refused(
-            [&] {
-                leat::triangle_mesh{corners, {{0, 1, 1}}};
-            },
-            "leat::triangle_mesh: the triangles must have an area: all have none");
-        const leat::disk inner{{0, 0}, 1};
-        const leat::without nothing{inner, leat::disk{{0, 0}, 2}};
-        expect_refused([&] { static_cast<void>(nothing.measure()); },
-                       "leat::without: measure() is not known: give it to the constructor, or take "
-                       "estimate_acceptance times the measure of the region around it");
-        auto g = source_of_this_test().stream();
-        expect_refused(
-            [&] { static_cast<void>(nothing(g)); },
-            "leat::without: rejected 700000 trials: the shape fills less than 1/10000 of "
-            "the region around it, if anything, or the engine is stuck");
-        expect_refused([&] { static_cast<void>(nothing.estimate_acceptance(0, g)); },
-                       "leat::without: trials = 0, must be at least 1");
-        expect_refused(
-            [&] {
-                leat::rejection{inner, signs_differ{}, 4};
-            },
-            "leat::rejection: measure = 4, must be above 0 and at most that of the region "
-            "around it");
-        expect_refused(
-            [&] {
-                leat::either{inner, leat::disk{{9, 9}, 1e300}};
-            },
-            "leat::either: measure[1] = 1.7976931348623157e+308, must fit in the type of "
-            "its region");
+    expect_refused(
+        [&] {
+            leat::triangle_mesh{corners, {}};
+        },
+        "leat::triangle_mesh: triangles.size() = 0, must be from 1 to 2^32");
+    expect_refused(
+        [&] {
+            leat::triangle_mesh{corners, {{0, 1, 1}}};
+        },
+        "leat::triangle_mesh: the triangles must have an area: all have none");
+    const leat::disk inner{{0, 0}, 1};
+    const leat::without nothing{inner, leat::disk{{0, 0}, 2}};
+    expect_refused([&] { static_cast<void>(nothing.measure()); },
+                   "leat::without: measure() is not known: give it to the constructor, or take "
+                   "estimate_acceptance times the measure of the region around it");
+    auto g = source_of_this_test().stream();
+    expect_refused([&] { static_cast<void>(nothing(g)); },
+                   "leat::without: rejected 700000 trials: the shape fills less than 1/10000 of "
+                   "the region around it, if anything, or the engine is stuck");
+    expect_refused([&] { static_cast<void>(nothing.estimate_acceptance(0, g)); },
+                   "leat::without: trials = 0, must be at least 1");
+    expect_refused(
+        [&] {
+            leat::rejection{inner, signs_differ{}, 4};
+        },
+        "leat::rejection: measure = 4, must be above 0 and at most that of the region "
+        "around it");
+    expect_refused(
+        [&] {
+            leat::either{inner, leat::disk{{9, 9}, 1e300}};
+        },
+        "leat::either: measure[1] = 1.7976931348623157e+308, must fit in the type of "
+        "its region");
 }
 
 } // namespace
