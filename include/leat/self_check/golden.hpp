@@ -319,6 +319,26 @@ inline void each_golden(golden_line line, void* context) {
     golden.sampler("sphere.3", 0x3f884639e907fd3cu, [] { return sphere{{0, 0, 0}, 2}; });
     golden.sampler("sphere.5", 0x251a183a0ff80121u, [] { return sphere{{0, 0, 0, 0, 0}, 2}; });
     golden.sampler("torus", 0x7db62a0abda2e9f1u, [] { return torus{{0, 0, 0}, 3, 1}; });
+    golden.sampler("either", 0x90beb94f6ea824d1u, [] {
+        return either{disk{{0, 0}, 2}, box<2>{{5, 0}, {7, 3}}};
+    });
+    golden.sampler("polygon", 0x52109233c436c09au, [] {
+        return polygon<double>{{{0, 0}, {6, -1}, {5, 4}, {3, 1.5}, {1, 4}}};
+    });
+    golden.sampler("simplex", 0x95573833dea09d4du, [] { return simplex<4>{}; });
+    golden.sampler("tetrahedron", 0x3af2f8082627e37eu, [] {
+        return tetrahedron{{1, 2, 3}, {4, 2, 3}, {1, 7, 3}, {2, 2, 5}};
+    });
+    golden.sampler("triangle", 0x75c4a7c62ec5c907u, [] {
+        return triangle{{0, 0}, {4, 0.5}, {1, 3}};
+    });
+    golden.sampler("triangle_mesh", 0x8838aefdf5001ebcu, [] {
+        return triangle_mesh<double>{{{0, 0, 0}, {1, 0, 0}, {0, 2, 0}, {0, 0, 3}},
+                                     {{0, 1, 2}, {0, 1, 3}}};
+    });
+    golden.sampler("without", 0x90e91fdb98a39d08u, [] {
+        return without{box<2>{{0, 0}, {4, 4}}, disk{{2, 2}, 1}};
+    });
 
     golden.draws("fill.braid", 0xa348607007811b1fu, [braid = xoshiro256_braid(1)](auto&) mutable {
         std::array<double, 20> values{};
