@@ -14,7 +14,9 @@
 #include <benchmark/benchmark.h>
 
 #include <array>
+#include <cmath> // to make a polygon
 #include <cstddef>
+#include <numbers>
 #include <type_traits>
 #include <vector>
 
@@ -112,6 +114,17 @@ void fill_points(benchmark::State& state, Sampler sampler) {
         4096e-9, benchmark::Counter::kIsIterationInvariantRate | benchmark::Counter::kInvert);
 }
 
+/// A ring of n vertices with seven lobes, and teeth.
+leat::polygon<> lobed_polygon(int n) {
+    std::vector<std::array<double, 2>> ring;
+    for (int i = 0; i < n; ++i) {
+        const double angle = 2 * std::numbers::pi * i / n;
+        const double radius = 1 + 0.3 * std::sin(7 * angle) + (i % 2 == 0 ? 0 : 0.001);
+        ring.push_back({radius * std::cos(angle), radius * std::sin(angle)});
+    }
+    return leat::polygon{ring};
+}
+
 template <class Engine>
 void register_all(const std::string& engine) {
     const auto add = [&engine](const char* name, auto sampler) {
@@ -138,6 +151,11 @@ void register_all(const std::string& engine) {
     add("cylinder", leat::cylinder{{0, 0, 0}, {1, 2, 3}, 1, 1});
     add("cone", leat::cone{{0, 0, 0}, {1, 2, 3}, 1, 1});
     add("torus", leat::torus{{0, 0, 0}, 2, 1});
+    add("triangle", leat::triangle{{0, 0}, {4, 0}, {1, 3}});
+    add("simplex<3>", leat::simplex<3>{});
+    add("polygon_10", lobed_polygon(10)); // the cost of a point should not grow with the vertices
+    add("polygon_1000", lobed_polygon(1000));
+    add("polygon_100000", lobed_polygon(100000));
 }
 
 const bool registered = [] {

@@ -19,7 +19,6 @@
 #include <algorithm> // sort
 #include <cstddef>
 #include <cstdint>
-#include <iterator> // next, prev
 #include <set>
 #include <utility> // swap
 #include <vector>
@@ -80,6 +79,9 @@ private:
         index newest;
     };
 
+    static sweep_line::iterator below(sweep_line::iterator it) { return --it; }
+    static sweep_line::iterator above(sweep_line::iterator it) { return ++it; }
+
     [[nodiscard]] bool before(index a, index b) const noexcept { return rank_[a] < rank_[b]; }
     [[nodiscard]] double turned(index a, index b, index c) const noexcept {
         return turn(points_[a], points_[b], points_[c]);
@@ -108,8 +110,8 @@ private:
 
     // The outer ring counterclockwise, holes clockwise. The sense shows at the leftmost vertex.
     void link_ring(std::size_t ring) {
-        const auto first = static_cast<index>(names_.first(ring));
-        const auto last = static_cast<index>(names_.last(ring));
+        const index first = names_.first(ring);
+        const index last = names_.last(ring);
         index leftmost = first;
         for (index i = first; i <= last; ++i) {
             next_[i] = i == last ? first : i + 1;
@@ -179,7 +181,7 @@ private:
 
     void require_apart_from_below(sweep_line::iterator it) const {
         if (it != line_.begin() && it != line_.end()) {
-            require_apart(*std::prev(it), *it);
+            require_apart(*below(it), *it);
         }
     }
 
@@ -202,14 +204,14 @@ private:
         }
     }
 
-    [[nodiscard]] index edge_below(index e) const { return *std::prev(places_[e]); }
+    [[nodiscard]] index edge_below(index e) const { return *below(places_[e]); }
 
     void replace(index old, index edge) {
         const auto after = line_.erase(places_[old]);
         const auto it = line_.insert(after, edge);
         places_[edge] = it;
         require_apart_from_below(it);
-        require_apart_from_below(std::next(it));
+        require_apart_from_below(above(it));
     }
 
     void begin_two(index v, index in, index out) {
@@ -219,21 +221,21 @@ private:
         }
         const bool encloses = sense > 0;
         const auto it = line_.insert(encloses ? out : in).first;
-        const auto upper = line_.insert(std::next(it), encloses ? in : out);
+        const auto upper = line_.insert(above(it), encloses ? in : out);
         places_[*it] = it;
         places_[*upper] = upper;
         require_apart_from_below(it);
-        require_apart_from_below(std::next(upper));
+        require_apart_from_below(above(upper));
         if (encloses) {
             const index only = new_link(v);
             chains_[out] = {only, only, only};
             return;
         }
         // The inside is parted, along a cut to the newest vertex of its chain.
-        if (it == line_.begin() || !is_lower(*std::prev(it))) {
+        if (it == line_.begin() || !is_lower(*below(it))) {
             names_.refuse_outside(v);
         }
-        chain& lower = chains_[*std::prev(it)];
+        chain& lower = chains_[*below(it)];
         const index cut = lower.newest;
         const index copy = new_link(links_[cut].vertex);
         chain upper_part{copy, lower.top == cut ? copy : lower.top, copy};
@@ -271,8 +273,9 @@ private:
     }
 
     index new_link(index vertex) {
+        const std::uint64_t place = links_.size();
         links_.push_back({vertex, none, none});
-        return static_cast<index>(links_.size() - 1);
+        return static_cast<index>(place);
     }
     void cut_off(index a, index b, index c) {
         triangles_.push_back({points_[a], points_[b], points_[c]});
