@@ -21,6 +21,7 @@
 
 #include "leat/core/barrier.hpp"
 #include "leat/core/concepts.hpp"
+#include "leat/core/error_free.hpp" // magnitude
 #include "leat/core/errors.hpp"
 #include "leat/core/scaled.hpp"
 #include "leat/core/square_root.hpp"
@@ -79,9 +80,9 @@ public:
         const std::size_t chosen = choice_(g);
         const double u = unit(g);
         const double v = unit(g);
-        const bool beyond = u + v > 1; // exact: multiples of 2^-53
-        const real x = beyond ? 1 - u : u;
-        const real y = beyond ? 1 - v : v;
+        const real fold = u + v > 1 ? 1.0 : 0.0; // exact, as the differences: steps of 2^-53
+        const real x = detail::magnitude((fold - u).value); // u or 1 - u, without a branch
+        const real y = detail::magnitude((fold - v).value);
         const real rest = real(1) - x - y;
         const auto& [i, j, k] = triangles_[chosen];
         const point_type& a = vertices_[i];

@@ -75,9 +75,9 @@ struct plane_triangle {
     /// diagonal: the parallelogram's other half falls onto this one.
     [[nodiscard]] constexpr plane_point at(double u, double v) const noexcept {
         using real = strict<double>;
-        const bool beyond = u + v > 1; // exact: multiples of 2^-53
-        const real x = beyond ? 1 - u : u;
-        const real y = beyond ? 1 - v : v;
+        const real fold = u + v > 1 ? 1.0 : 0.0;    // exact, as the differences: steps of 2^-53
+        const real x = magnitude((fold - u).value); // u or 1 - u, without a branch
+        const real y = magnitude((fold - v).value);
         return {(a[0] + (x * (real(b[0]) - a[0]) + y * (real(c[0]) - a[0]))).value,
                 (a[1] + (x * (real(b[1]) - a[1]) + y * (real(c[1]) - a[1]))).value};
     }
