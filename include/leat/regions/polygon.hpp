@@ -31,6 +31,7 @@
 #include "leat/core/concepts.hpp"
 #include "leat/core/errors.hpp"
 #include "leat/regions/detail/edge_bands.hpp"
+#include "leat/regions/detail/merge_sort.hpp"
 #include "leat/regions/detail/orientation.hpp"
 #include "leat/regions/detail/plane_sweep.hpp"
 #include "leat/regions/detail/plane_triangle.hpp"
@@ -38,7 +39,6 @@
 #include "leat/regions/detail/ring_names.hpp"
 #include "leat/uniform/alias_table.hpp"
 
-#include <algorithm> // stable_sort
 #include <array>
 #include <cstddef>
 #include <cstdint>
@@ -145,8 +145,8 @@ private:
         const auto area = [](const detail::plane_triangle& t) {
             return detail::doubled_area(t.a, t.b, t.c);
         };
-        std::stable_sort(triangles_.begin(), triangles_.end(),
-                         [&](const auto& s, const auto& t) { return area(s) > area(t); });
+        detail::merge_sort(triangles_,
+                           [&](const auto& s, const auto& t) { return area(s) > area(t); });
         std::vector<double> areas;
         areas.reserve(triangles_.size());
         real sum = 0.0;

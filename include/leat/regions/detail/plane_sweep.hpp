@@ -12,11 +12,11 @@
 #ifndef LEAT_REGIONS_DETAIL_PLANE_SWEEP_HPP
 #define LEAT_REGIONS_DETAIL_PLANE_SWEEP_HPP
 
+#include "leat/regions/detail/merge_sort.hpp"
 #include "leat/regions/detail/orientation.hpp"
 #include "leat/regions/detail/plane_triangle.hpp"
 #include "leat/regions/detail/ring_names.hpp"
 
-#include <algorithm> // sort
 #include <cstddef>
 #include <cstdint>
 #include <set>
@@ -96,9 +96,7 @@ private:
         for (index i = 0; i < order.size(); ++i) {
             order[i] = i;
         }
-        std::sort(order.begin(), order.end(), [this](index a, index b) {
-            return points_[a] != points_[b] ? points_[a] < points_[b] : a < b;
-        });
+        merge_sort(order, [this](index a, index b) { return points_[a] < points_[b]; });
         for (index i = 0; i < order.size(); ++i) {
             rank_[order[i]] = i;
             if (i > 0 && points_[order[i]] == points_[order[i - 1]]) {
