@@ -31,7 +31,7 @@
 #include "leat/distributions/detail/evaluate.hpp"
 #include "leat/distributions/detail/into_range.hpp"
 #include "leat/distributions/detail/law.hpp"
-#include "leat/distributions/detail/quadrature.hpp" // the variance
+#include "leat/distributions/detail/quadrature.hpp" // the variance, the cumulative chance
 #include "leat/distributions/detail/ziggurat.hpp"
 #include "leat/uniform/unit.hpp"
 
@@ -122,11 +122,20 @@ public:
         return detail::into_signed<Real>((real(mean()) + pi).value);
     }
 
-    /// The probability density at x. (The cumulative chance is a series: with_boost_math.hpp.)
+    /// The probability density at x.
     [[nodiscard]] constexpr double density(double x) const;
+    /// P(X <= x), by quadrature: some ten microseconds.
+    [[nodiscard]] constexpr double cumulative(double x) const;
+    /// The x with cumulative(x) = p, 0 < p < 1, by bisection: some half a millisecond.
+    [[nodiscard]] constexpr double quantile(double p) const;
 
 private:
     static constexpr double pi = 2 * detail::half_pi;
+
+    /// The chance of being further from the mean than `away`, in [0, pi], and on one side.
+    [[nodiscard]] constexpr double tail(double away) const;
+    /// The density at this distance from the mean.
+    [[nodiscard]] constexpr double density_away(double away) const;
 
     /// With t = 1 + sqrt(1 + 4 k^2), the published r is t / (2 k). Here are t / 8, (t - 2 k) / 8,
     /// k / 2 and q = sqrt((r - 1) / (r + 1)).
@@ -170,7 +179,12 @@ constexpr double von_mises<Real>::variance() const noexcept {
 template <detail::portable_real Real>
 constexpr double von_mises<Real>::density(double x) const {
     const real away = real(detail::number_or_refuse(param_type::law_name, x)) - mean();
-    if (!(detail::magnitude(away.value) <= pi)) {
+    return density_away(detail::magnitude(away.value));
+}
+
+template <detail::portable_real Real>
+constexpr double von_mises<Real>::density_away(double away) const {
+    if (!(away <= pi)) {
         return 0;
     }
     const auto k = static_cast<double>(concentration());
@@ -197,12 +211,75 @@ constexpr double von_mises<Real>::density(double x) const {
         scaled_bessel = scaled_bessel * detail::natural_exp(-k);
     }
     // cos t - 1 is -2 sin^2(t / 2)
-    const double turns = (away / (real(4.0) * pi)).value;
-    const real sine = detail::magnitude(turns) < 0x1p-900 ? 0.0 : detail::sine_cosine(turns).sine;
+    const double turns = (real(away) / (real(4.0) * pi)).value;
+    const real sine = turns < 0x1p-900 ? 0.0 : detail::sine_cosine(turns).sine;
     const real exponent = real(k) * sine * sine * -2.0;
     return detail::or_zero(
         detail::exp_scaled(exponent.value) *
         detail::inverse(detail::split((scaled_bessel * (real(2.0) * pi)).value)));
+}
+
+template <detail::portable_real Real>
+constexpr double von_mises<Real>::tail(double away) const {
+    const double here = density_away(away);
+    if (here == 0) {
+        return 0;
+    }
+    const real k = static_cast<double>(concentration());
+    const real turns = real(1.0) / (real(4.0) * pi); // of half an angle
+    const real start = (real(away) * turns).value < 0x1p-900 ? real(0.0) : real(away) * turns;
+    // Up to pi, or to where the density is e^-40 of what it is here.
+    const real sine = detail::sine_cosine(start.value).sine;
+    real end = pi;
+    if (k > 20) {
+        const real square = sine * sine + real(20.0) / k;
+        if (square < 1) {
+            end = real(2.0) * detail::arctangent(detail::square_root(square.value),
+                                                 detail::square_root((real(1.0) - square).value));
+        }
+    }
+    const real reach = end - away;
+    if (!(reach > 0)) {
+        return 0;
+    }
+    // The density u further on is e^(-2 k sin(away + u/2) sin(u/2)) of it, without cancellation.
+    constexpr int panels = 32;
+    constexpr double width = 1.0 / panels;
+    real mean_share = 0.0;
+    for (int panel = 0; panel < panels; ++panel) {
+        mean_share = mean_share + detail::mean_on_unit([&](double t) {
+                         const real u = reach * (real(static_cast<double>(panel)) + t) * width;
+                         const real half = u * turns;
+                         const real far = detail::sine_cosine((start + start + half).value).sine;
+                         const real near = detail::sine_cosine(half.value).sine;
+                         return detail::natural_exp((real(-2.0) * (k * near) * far).value);
+                     });
+    }
+    const double chance = detail::or_zero(detail::split(here) * detail::split(reach.value) *
+                                          detail::split((mean_share * width).value));
+    return chance < 0.5 ? chance : 0.5;
+}
+
+template <detail::portable_real Real>
+constexpr double von_mises<Real>::cumulative(double x) const {
+    const real away = real(detail::number_or_refuse(param_type::law_name, x)) - mean();
+    if (away.value == 0) {
+        return 0.5;
+    }
+    const double beyond = tail(detail::magnitude(away.value));
+    return away < 0 ? beyond : (real(1.0) - beyond).value;
+}
+
+template <detail::portable_real Real>
+constexpr double von_mises<Real>::quantile(double p) const {
+    detail::chance_or_refuse(param_type::law_name, p);
+    if (p == 0.5) {
+        return mean();
+    }
+    const real nearer = p < 0.5 ? real(p) : real(1.0) - p; // exact
+    const real away =
+        detail::least_reaching(-nearer.value, [this](double at) { return -tail(at); });
+    return detail::kept_normal((p < 0.5 ? real(mean()) - away : real(mean()) + away).value);
 }
 
 } // namespace leat

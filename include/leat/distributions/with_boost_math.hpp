@@ -1,5 +1,5 @@
 // density, cumulative and quantile of every law by one name, with Boost.Math where the laws
-// themselves stop: at incomplete gamma and beta functions.
+// themselves stop, at incomplete gamma and beta functions, and by sums for laws of counts.
 //
 //     leat::cumulative(law, x)    leat::quantile(law, p)    leat::density(law, x)
 //
@@ -7,6 +7,13 @@
 // gamma, erlang, chi_squared and maxwell by the incomplete gamma function, beta, student_t and
 // fisher_f by the incomplete beta function, inverse_gaussian by its own cumulative chance.
 // The quantiles of the last four are found by bisection, in 62 steps of a microsecond or less.
+//
+// poisson, binomial, negative_binomial and hypergeometric need no Boost: their masses are summed
+// from x away from the mean, some nine standard deviations of them at a few nanoseconds each. That
+// is right to a few 1e-12 for standard deviations up to 1e4, beyond by estimate to 1e-15 times the
+// standard deviation, and the same everywhere. Only a negative_binomial of p < 1e-4 goes by the
+// incomplete beta function. Their quantile is the least whole number k with cumulative(law, k) >=
+// p. Not for standard deviations above some 1e8, which take seconds to minutes.
 //
 // Arguments and refusals are those of the members: x NaN and p outside (0, 1) are refused, results
 // are finite. What Boost.Math computes is right to about 1e-13, but its last digits may differ
@@ -17,17 +24,23 @@
 #ifndef LEAT_DISTRIBUTIONS_WITH_BOOST_MATH_HPP
 #define LEAT_DISTRIBUTIONS_WITH_BOOST_MATH_HPP
 
+#include "leat/core/barrier.hpp"
 #include "leat/core/concepts.hpp"
+#include "leat/core/normal_quantile.hpp" // where to look for a count
 #include "leat/core/square_root.hpp"
 #include "leat/distributions/beta.hpp"
+#include "leat/distributions/binomial.hpp"
 #include "leat/distributions/chi_squared.hpp"
 #include "leat/distributions/detail/evaluate.hpp"
 #include "leat/distributions/detail/into_range.hpp"
 #include "leat/distributions/erlang.hpp"
 #include "leat/distributions/fisher_f.hpp"
 #include "leat/distributions/gamma.hpp"
+#include "leat/distributions/hypergeometric.hpp"
 #include "leat/distributions/inverse_gaussian.hpp"
 #include "leat/distributions/maxwell.hpp"
+#include "leat/distributions/negative_binomial.hpp"
+#include "leat/distributions/poisson.hpp"
 #include "leat/distributions/student_t.hpp"
 
 #include <boost/math/distributions/fisher_f.hpp>
@@ -36,7 +49,6 @@
 #include <boost/math/special_functions/beta.hpp>
 #include <boost/math/special_functions/gamma.hpp>
 
-#include <bit>
 #include <cstdint>
 #include <limits>
 
@@ -48,23 +60,6 @@ using boost_policy = boost::math::policies::policy<
     boost::math::policies::promote_double<false>,
     boost::math::policies::overflow_error<boost::math::policies::ignore_error>,
     boost::math::policies::underflow_error<boost::math::policies::ignore_error>>;
-
-/// The least positive normal double x with f(x) >= p, for an increasing f: by bisection over the
-/// bits, so that 62 steps find it whatever its size; the largest double if there is none.
-template <class Function>
-double least_reaching(double p, Function f) {
-    auto low = std::bit_cast<std::uint64_t>(std::numeric_limits<double>::min());
-    auto high = std::bit_cast<std::uint64_t>(std::numeric_limits<double>::max());
-    while (low < high) {
-        const std::uint64_t middle = low + (high - low) / 2;
-        if (f(std::bit_cast<double>(middle)) >= p) {
-            high = middle;
-        } else {
-            low = middle + 1;
-        }
-    }
-    return std::bit_cast<double>(low);
-}
 
 /// P(X <= x) of scale times a gamma variate.
 inline double gamma_cumulative(double shape, double scale, double x) {
@@ -78,6 +73,67 @@ inline double gamma_cumulative(double shape, double scale, double x) {
 inline double gamma_quantile(double shape, double scale, double p) {
     const double x = boost::math::gamma_p_inv(shape, p, boost_policy());
     return x > 0 && finite(x) ? product(scale, x) : into_positive<double>(x);
+}
+
+/// P(X <= x) of a law of counts: its masses summed from x away from the mean, until they matter no
+/// more. ratio(j) is the mass at j + 1 as a share of that at j.
+template <class Law, class Ratio>
+double count_cumulative(const Law& law, double x, Ratio ratio) {
+    using real = strict<double>;
+    number_or_refuse(Law::param_type::law_name, x);
+    const auto first = static_cast<double>(law.min());
+    const auto last = static_cast<double>(law.max());
+    if (!(x >= first && x < last)) {
+        return x >= last ? 1 : 0;
+    }
+    const real k = static_cast<double>(static_cast<std::uint64_t>(x));
+    const bool below = k < law.mean();
+    real j = below ? k : k + 1.0;
+    real mass = law.density(j.value);
+    real sum = mass;
+    while (mass > sum * 0x1p-80 && (below ? j > first : j < last)) {
+        mass = below ? mass / ratio(j - 1.0) : mass * ratio(j);
+        j = below ? j - 1.0 : j + 1.0;
+        sum = sum + mass;
+    }
+    const double tail = sum < 1 ? sum.value : 1;
+    return below ? tail : held(1 - tail);
+}
+
+/// The least k with cumulative(law, k) >= p: bracketed from where the normal law would have it,
+/// then by bisection.
+template <class Law>
+double count_quantile(const Law& law, double p) {
+    chance_or_refuse(Law::param_type::law_name, p);
+    const auto reaches = [&](std::uint64_t k) {
+        return cumulative(law, static_cast<double>(k)) >= p;
+    };
+    const auto first = static_cast<std::uint64_t>(law.min());
+    const auto last = static_cast<std::uint64_t>(law.max());
+    const double guess = law.mean() + square_root(law.variance()) * normal_quantile(p);
+    std::uint64_t high = guess > 0 ? floor_at_most(guess, last) : 0;
+    high = high < first ? first : high;
+    std::uint64_t low = high; // the answer is in low .. high once each loop has had its turn
+    std::uint64_t step = 1;
+    while (high < last && !reaches(high)) {
+        low = high + 1;
+        high = last - high > step ? high + step : last;
+        step *= 2;
+    }
+    while (low > first && reaches(low - 1)) {
+        high = low - 1;
+        low = high - first > step ? high - step : first;
+        step *= 2;
+    }
+    while (low < high) {
+        const std::uint64_t middle = low + (high - low) / 2;
+        if (reaches(middle)) {
+            high = middle;
+        } else {
+            low = middle + 1;
+        }
+    }
+    return static_cast<double>(high);
 }
 
 } // namespace detail
@@ -214,6 +270,68 @@ template <detail::portable_real Real>
 double quantile(const inverse_gaussian<Real>& law, double p) {
     detail::chance_or_refuse("inverse_gaussian", p);
     return detail::least_reaching(p, [&](double at) { return law.cumulative(at); });
+}
+
+/// P(X <= x) of a Poisson law.
+template <detail::number_integer Int>
+double cumulative(const poisson<Int>& law, double x) {
+    using real = detail::strict<double>;
+    return detail::count_cumulative(law, x, [&](real j) { return real(law.mean()) / (j + 1.0); });
+}
+/// The least k with cumulative(law, k) >= p, 0 < p < 1.
+template <detail::number_integer Int>
+double quantile(const poisson<Int>& law, double p) {
+    return detail::count_quantile(law, p);
+}
+
+/// P(X <= x) of a binomial law.
+template <detail::number_integer Int>
+double cumulative(const binomial<Int>& law, double x) {
+    using real = detail::strict<double>;
+    const real n = static_cast<double>(law.n());
+    const real p = law.p();
+    return detail::count_cumulative(
+        law, x, [&](real j) { return (n - j) * p / ((j + 1.0) * (real(1.0) - p)); });
+}
+/// The least k with cumulative(law, k) >= p, 0 < p < 1.
+template <detail::number_integer Int>
+double quantile(const binomial<Int>& law, double p) {
+    return detail::count_quantile(law, p);
+}
+
+/// P(X <= x) of a negative binomial law.
+template <detail::number_integer Int>
+double cumulative(const negative_binomial<Int>& law, double x) {
+    using real = detail::strict<double>;
+    if (law.p() < 1e-4 && x >= 0 && x < static_cast<double>(law.max())) { // too many to sum
+        const auto k = static_cast<double>(static_cast<std::uint64_t>(x));
+        const double chance = boost::math::ibeta(law.r(), k + 1, law.p(), detail::boost_policy());
+        return chance < std::numeric_limits<double>::min() ? 0 : chance;
+    }
+    return detail::count_cumulative(
+        law, x, [&](real j) { return (j + law.r()) / (j + 1.0) * (real(1.0) - law.p()); });
+}
+/// The least k with cumulative(law, k) >= p, 0 < p < 1.
+template <detail::number_integer Int>
+double quantile(const negative_binomial<Int>& law, double p) {
+    return detail::count_quantile(law, p);
+}
+
+/// P(X <= x) of a hypergeometric law.
+template <detail::number_integer Int>
+double cumulative(const hypergeometric<Int>& law, double x) {
+    using real = detail::strict<double>;
+    const real marked = static_cast<double>(law.successes());
+    const real drawn = static_cast<double>(law.draws());
+    const real others = real(static_cast<double>(law.population())) - marked;
+    return detail::count_cumulative(law, x, [&](real j) {
+        return (marked - j) * (drawn - j) / ((j + 1.0) * (others - drawn + j + 1.0));
+    });
+}
+/// The least k with cumulative(law, k) >= p, 0 < p < 1.
+template <detail::number_integer Int>
+double quantile(const hypergeometric<Int>& law, double p) {
+    return detail::count_quantile(law, p);
 }
 
 } // namespace leat

@@ -69,6 +69,23 @@ constexpr double standardised(double x, double location, double scale) noexcept 
     return ((real(x) * 0.5 - real(location) * 0.5) / scale * 2.0).value;
 }
 
+/// The least positive normal double x with f(x) >= p, for an increasing f: by bisection over the
+/// bits, so that 62 steps find it whatever its size; the largest double if there is none.
+template <class Function>
+constexpr double least_reaching(double p, Function f) {
+    auto low = std::bit_cast<std::uint64_t>(std::numeric_limits<double>::min());
+    auto high = std::bit_cast<std::uint64_t>(std::numeric_limits<double>::max());
+    while (low < high) {
+        const std::uint64_t middle = low + (high - low) / 2;
+        if (f(std::bit_cast<double>(middle)) >= p) {
+            high = middle;
+        } else {
+            low = middle + 1;
+        }
+    }
+    return std::bit_cast<double>(low);
+}
+
 } // namespace leat::detail
 
 #endif
