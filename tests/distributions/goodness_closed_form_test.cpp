@@ -4,6 +4,7 @@
 #include "distributions/law_report.hpp"
 #include "support/alarm_budget.hpp"
 #include "support/reference.hpp"
+#include "support/sanitized.hpp"
 #include "support/seeds.hpp"
 
 #include "leat/distributions/cauchy.hpp"
@@ -39,7 +40,7 @@ namespace {
 using namespace leat_test;
 namespace bm = boost::math;
 
-constexpr int many = 1000000;
+constexpr int many = sanitized ? 200000 : 1000000;
 
 /// Kolmogorov-Smirnov, mean and variance, by the law's own name in this test.
 template <class Law, class Reference>

@@ -4,6 +4,7 @@
 
 #include "distributions/law_report.hpp"
 #include "support/alarm_budget.hpp"
+#include "support/sanitized.hpp"
 #include "support/seeds.hpp"
 
 #include "leat/distributions/beta.hpp"
@@ -32,16 +33,7 @@ namespace {
 
 using namespace leat_test;
 
-#if defined(__has_feature)
-#define LEAT_TEST_HAS_FEATURE(name) __has_feature(name)
-#else
-#define LEAT_TEST_HAS_FEATURE(name) 0
-#endif
-#if defined(__SANITIZE_ADDRESS__) || LEAT_TEST_HAS_FEATURE(address_sanitizer)
-constexpr int many = 200000; // slow, and looking for other faults
-#else
-constexpr int many = 1000000;
-#endif
+constexpr int many = sanitized ? 200000 : 1000000;
 constexpr int fewer = many / 4;
 constexpr int few = 100000; // enough to see a planted fault
 constexpr double infinity = std::numeric_limits<double>::infinity();

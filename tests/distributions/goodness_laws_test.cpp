@@ -3,6 +3,7 @@
 #include "distributions/law_report.hpp"
 #include "support/alarm_budget.hpp"
 #include "support/reference.hpp"
+#include "support/sanitized.hpp"
 #include "support/seeds.hpp"
 
 #include "leat/distributions/exponential.hpp"
@@ -24,7 +25,7 @@ namespace {
 
 using namespace leat_test;
 
-constexpr int many = 1000000;
+constexpr int many = sanitized ? 200000 : 1000000;
 
 template <class Law, class Reference>
 std::vector<double> check_law(const std::string& name, const Law& law, const Reference& reference,

@@ -9,6 +9,7 @@
 #ifndef LEAT_TESTS_REGIONS_UNIFORM_REPORT_HPP
 #define LEAT_TESTS_REGIONS_UNIFORM_REPORT_HPP
 
+#include "support/sanitized.hpp"
 #include "support/statistics.hpp"
 
 #include <algorithm>
@@ -23,11 +24,7 @@ namespace leat_test {
 
 /// Points of a report: a million, but under the address sanitizer, which is slow and looks for
 /// other faults, a quarter of that.
-#if defined(__SANITIZE_ADDRESS__)
-inline constexpr int many = 250000;
-#else
-inline constexpr int many = 1000000;
-#endif
+inline constexpr int many = sanitized ? 250000 : 1000000;
 inline constexpr int few = 100000; // enough to see a planted fault
 
 /// x^n; std::pow would take most of the tests' time.
