@@ -21,11 +21,12 @@ using namespace leat_test;
 
 constexpr std::uint64_t seeds = 65536;
 
-/// The first words of the same stream under seeds 0, 1, ..., 65535.
+/// The first words of the same stream under seeds 0, 1, ..., 65535; at a seed offset, the next
+/// 65536 seeds or those after them.
 std::vector<std::uint64_t> first_words() {
     std::vector<std::uint64_t> words;
     for (std::uint64_t seed = 0; seed < seeds; ++seed) {
-        words.push_back(leat::source{seed}.thin_stream("first")());
+        words.push_back(leat::source{seed_offset() * seeds + seed}.thin_stream("first")());
     }
     return words;
 }
@@ -98,8 +99,9 @@ TEST(StreamStatistics, NeighbouringStreamsAreUncorrelated) {
     for (std::uint64_t i = 0; i < pairs; ++i) {
         auto a = study.stream("index", 2 * i);
         auto b = study.stream("index", 2 * i + 1);
-        auto c = leat::source{2 * i}.stream("seed");
-        auto d = leat::source{2 * i + 1}.stream("seed");
+        const std::uint64_t pair = seed_offset() * pairs + i;
+        auto c = leat::source{2 * pair}.stream("seed");
+        auto d = leat::source{2 * pair + 1}.stream("seed");
         auto e = study.branch(2 * i).stream("branch");
         auto f = study.branch(2 * i + 1).stream("branch");
         auto g = study.stream("along", i);
