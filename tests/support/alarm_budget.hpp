@@ -138,6 +138,12 @@ inline constexpr declared_checks alarm_budget[] = {
     {"StreamStatistics.FirstWordsOfNeighbouringSeedsAreUncorrelated", 80},
     {"StreamStatistics.NeighbouringStreamsAreUncorrelated", 4},
     {"StreamStatistics.SiblingsShareNoWord", 271}, // a chance of 2.71e-8
+    {"LawsAtLength.Normal", 9},
+    {"LawsAtLength.Exponential", 6},
+    {"LawsAtLength.Gamma", 6},
+    {"LawsAtLength.Poisson", 18},
+    {"LawsAtLength.Binomial", 13},
+    {"NormalBeyondEight.IsComplete", 2},
     {"AlarmBudget.APValueBelowTheLevelFails", 1},
 };
 
