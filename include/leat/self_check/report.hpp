@@ -35,7 +35,7 @@ struct self_check_finding {
 /// The result of `self_check()`. True (`ok()`) if nothing failed; there may still be notes.
 class self_check_report {
 public:
-    static constexpr std::size_t capacity = 64;
+    static constexpr std::size_t capacity = 256; // above what each_golden and the other checks find
 
     [[nodiscard]] constexpr bool ok() const noexcept { return failures_ == 0; }
     constexpr explicit operator bool() const noexcept { return ok(); }
