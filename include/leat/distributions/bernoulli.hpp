@@ -31,7 +31,7 @@ struct bernoulli_parameters {
     using distribution_type = bernoulli;
     static constexpr const char* law_name = "bernoulli";
 
-    double p = 0.5;
+    double p = 0.5; ///< the chance of true, 0 to 1
 
     /// What is wrong with it, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

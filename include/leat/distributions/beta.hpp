@@ -46,8 +46,8 @@ struct beta_parameters {
     using distribution_type = beta<Real>;
     static constexpr const char* law_name = "beta";
 
-    Real a = 1;
-    Real b = 1;
+    Real a = 1; ///< at least 1e-300
+    Real b = 1; ///< at least 1e-300
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

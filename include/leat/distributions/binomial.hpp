@@ -46,8 +46,8 @@ struct binomial_parameters {
     using distribution_type = binomial<Int>;
     static constexpr const char* law_name = "binomial";
 
-    Int n = 1;
-    double p = 0.5;
+    Int n = 1;      ///< trials, >= 0
+    double p = 0.5; ///< the chance of success, 0 to 1
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

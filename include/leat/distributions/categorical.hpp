@@ -44,7 +44,7 @@ struct categorical_parameters {
     using distribution_type = categorical<Int>;
     static constexpr const char* law_name = "categorical";
 
-    std::vector<double> weights{1};
+    std::vector<double> weights{1}; ///< >= 0, not all 0; they need not sum to 1
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

@@ -38,8 +38,8 @@ struct cauchy_parameters {
     using distribution_type = cauchy<Real>;
     static constexpr const char* law_name = "cauchy";
 
-    Real location = 0;
-    Real scale = 1;
+    Real location = 0; ///< the median
+    Real scale = 1;    ///< half the width at half the height, > 0
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

@@ -35,7 +35,7 @@ struct chi_squared_parameters {
     using distribution_type = chi_squared<Real>;
     static constexpr const char* law_name = "chi_squared";
 
-    Real k = 1;
+    Real k = 1; ///< degrees of freedom, > 0
 
     /// What is wrong with it, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

@@ -38,7 +38,7 @@ struct dirichlet_parameters {
     using distribution_type = dirichlet;
     static constexpr const char* law_name = "dirichlet";
 
-    std::vector<double> alpha{1};
+    std::vector<double> alpha{1}; ///< each from 1e-300 to 1e300
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

@@ -42,7 +42,7 @@ struct empirical_parameters {
     using distribution_type = empirical<Real>;
     static constexpr const char* law_name = "empirical";
 
-    std::vector<Real> values{0};
+    std::vector<Real> values{0}; ///< what was observed, in any order; finite
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

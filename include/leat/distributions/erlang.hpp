@@ -36,10 +36,11 @@ template <detail::portable_real Real = double>
 struct erlang_parameters {
     using distribution_type = erlang<Real>;
     static constexpr const char* law_name = "erlang";
+    /// What messages say of k.
     static constexpr const char* allowed_k = "must be a whole number from 1 to 2^53";
 
-    std::int64_t k = 1;
-    Real rate = 1;
+    std::int64_t k = 1; ///< events waited for, 1 to 2^53
+    Real rate = 1;      ///< events per unit of time, > 0
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

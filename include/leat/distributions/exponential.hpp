@@ -37,7 +37,7 @@ struct exponential_parameters {
     using distribution_type = exponential<Real>;
     static constexpr const char* law_name = "exponential";
 
-    Real rate = 1;
+    Real rate = 1; ///< events per unit of time, > 0
 
     /// What is wrong with it, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

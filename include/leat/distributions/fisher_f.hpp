@@ -37,8 +37,8 @@ struct fisher_f_parameters {
     using distribution_type = fisher_f<Real>;
     static constexpr const char* law_name = "fisher_f";
 
-    Real d1 = 1;
-    Real d2 = 1;
+    Real d1 = 1; ///< degrees of freedom above the line, at least 1e-300
+    Real d2 = 1; ///< and below it, at least 1e-300
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

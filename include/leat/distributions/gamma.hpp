@@ -47,8 +47,8 @@ struct gamma_parameters {
     using distribution_type = gamma<Real>;
     static constexpr const char* law_name = "gamma";
 
-    Real shape = 1;
-    Real scale = 1;
+    Real shape = 1; ///< > 0
+    Real scale = 1; ///< > 0
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

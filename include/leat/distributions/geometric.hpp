@@ -46,7 +46,7 @@ struct geometric_parameters {
     using distribution_type = geometric<Int>;
     static constexpr const char* law_name = "geometric";
 
-    double p = 0.5;
+    double p = 0.5; ///< the chance of success, above 0, at most 1
 
     /// What is wrong with it, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

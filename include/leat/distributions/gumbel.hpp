@@ -34,8 +34,8 @@ struct gumbel_parameters {
     using distribution_type = gumbel<Real>;
     static constexpr const char* law_name = "gumbel";
 
-    Real location = 0;
-    Real scale = 1;
+    Real location = 0; ///< the mode
+    Real scale = 1;    ///< > 0
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

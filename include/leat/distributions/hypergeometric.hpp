@@ -41,9 +41,9 @@ struct hypergeometric_parameters {
     using distribution_type = hypergeometric<Int>;
     static constexpr const char* law_name = "hypergeometric";
 
-    Int population = 2;
-    Int successes = 1;
-    Int draws = 1;
+    Int population = 2; ///< all there are, >= 0
+    Int successes = 1;  ///< those that count, 0 to population
+    Int draws = 1;      ///< how many are drawn, 0 to population
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

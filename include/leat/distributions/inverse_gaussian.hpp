@@ -45,8 +45,8 @@ struct inverse_gaussian_parameters {
     using distribution_type = inverse_gaussian<Real>;
     static constexpr const char* law_name = "inverse_gaussian";
 
-    Real mean = 1;
-    Real shape = 1;
+    Real mean = 1;  ///< > 0
+    Real shape = 1; ///< > 0
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

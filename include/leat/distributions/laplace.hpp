@@ -35,8 +35,8 @@ struct laplace_parameters {
     using distribution_type = laplace<Real>;
     static constexpr const char* law_name = "laplace";
 
-    Real location = 0;
-    Real scale = 1;
+    Real location = 0; ///< the mean
+    Real scale = 1;    ///< > 0
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

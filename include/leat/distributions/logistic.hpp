@@ -36,8 +36,8 @@ struct logistic_parameters {
     using distribution_type = logistic<Real>;
     static constexpr const char* law_name = "logistic";
 
-    Real location = 0;
-    Real scale = 1;
+    Real location = 0; ///< the mean
+    Real scale = 1;    ///< > 0
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

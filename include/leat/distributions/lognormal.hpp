@@ -39,8 +39,8 @@ struct lognormal_parameters {
     using distribution_type = lognormal<Real>;
     static constexpr const char* law_name = "lognormal";
 
-    Real log_mean = 0;
-    Real log_sd = 1;
+    Real log_mean = 0; ///< the mean of the logarithm
+    Real log_sd = 1;   ///< the standard deviation of the logarithm, >= 0
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

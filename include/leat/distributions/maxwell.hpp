@@ -38,7 +38,7 @@ struct maxwell_parameters {
     using distribution_type = maxwell<Real>;
     static constexpr const char* law_name = "maxwell";
 
-    Real scale = 1;
+    Real scale = 1; ///< one component's standard deviation, > 0
 
     /// What is wrong with it, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

@@ -44,8 +44,8 @@ struct multinomial_parameters {
     using distribution_type = multinomial<Int>;
     static constexpr const char* law_name = "multinomial";
 
-    Int n = 1;
-    std::vector<double> weights{1};
+    Int n = 1;                      ///< trials, >= 0
+    std::vector<double> weights{1}; ///< >= 0, not all 0; they need not sum to 1
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

@@ -38,8 +38,9 @@ struct multivariate_normal_parameters {
     using distribution_type = multivariate_normal;
     static constexpr const char* law_name = "multivariate_normal";
 
-    std::vector<double> mean{0};
-    std::vector<std::vector<double>> covariance{{1}};
+    std::vector<double> mean{0}; ///< as many as there are dimensions
+    std::vector<std::vector<double>> covariance{
+        {1}}; ///< its rows; symmetric, positive semidefinite
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const {

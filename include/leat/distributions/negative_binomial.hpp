@@ -80,8 +80,8 @@ struct negative_binomial_parameters {
     using distribution_type = negative_binomial<Int>;
     static constexpr const char* law_name = "negative_binomial";
 
-    double r = 1;
-    double p = 0.5;
+    double r = 1;   ///< successes waited for, > 0; any real number
+    double p = 0.5; ///< the chance of success, above 0, at most 1
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

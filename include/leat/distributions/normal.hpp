@@ -40,8 +40,8 @@ struct normal_parameters {
     using distribution_type = normal<Real>;
     static constexpr const char* law_name = "normal";
 
-    Real mean = 0;
-    Real sd = 1;
+    Real mean = 0; ///< finite
+    Real sd = 1;   ///< the standard deviation, >= 0
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

@@ -37,8 +37,8 @@ struct pareto_parameters {
     using distribution_type = pareto<Real>;
     static constexpr const char* law_name = "pareto";
 
-    Real scale = 1;
-    Real shape = 1;
+    Real scale = 1; ///< the least value, > 0
+    Real shape = 1; ///< > 0
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

@@ -96,8 +96,8 @@ struct piecewise_linear_parameters {
     using distribution_type = piecewise_linear<Real>;
     static constexpr const char* law_name = "piecewise_linear";
 
-    std::vector<Real> points{0, 1};
-    std::vector<Real> densities{1, 1};
+    std::vector<Real> points{0, 1};    ///< at least two, ascending
+    std::vector<Real> densities{1, 1}; ///< one at each point, >= 0, not all 0; any area
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

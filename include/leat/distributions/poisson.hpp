@@ -63,7 +63,7 @@ struct poisson_parameters {
     using distribution_type = poisson<Int>;
     static constexpr const char* law_name = "poisson";
 
-    double mean = 1;
+    double mean = 1; ///< >= 0
 
     /// What is wrong with it, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

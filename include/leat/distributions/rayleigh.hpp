@@ -37,7 +37,7 @@ struct rayleigh_parameters {
     using distribution_type = rayleigh<Real>;
     static constexpr const char* law_name = "rayleigh";
 
-    Real scale = 1;
+    Real scale = 1; ///< one component's standard deviation, > 0
 
     /// What is wrong with it, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

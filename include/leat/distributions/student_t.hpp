@@ -39,7 +39,7 @@ struct student_t_parameters {
     using distribution_type = student_t<Real>;
     static constexpr const char* law_name = "student_t";
 
-    Real k = 1;
+    Real k = 1; ///< degrees of freedom, at least 1e-300
 
     /// What is wrong with it, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

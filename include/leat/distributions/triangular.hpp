@@ -37,9 +37,9 @@ struct triangular_parameters {
     using distribution_type = triangular<Real>;
     static constexpr const char* law_name = "triangular";
 
-    Real lo = 0;
-    Real mode = Real{1} / 2;
-    Real hi = 1;
+    Real lo = 0;             ///< the least value
+    Real mode = Real{1} / 2; ///< the likeliest, lo to hi
+    Real hi = 1;             ///< the greatest, above lo
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

@@ -68,10 +68,10 @@ struct truncated_normal_parameters {
     using distribution_type = truncated_normal<Real>;
     static constexpr const char* law_name = "truncated_normal";
 
-    Real mean = 0;
-    Real sd = 1;
-    Real lo = -1;
-    Real hi = 1;
+    Real mean = 0; ///< before the cut
+    Real sd = 1;   ///< before the cut; > 0, or 0 where lo < mean < hi
+    Real lo = -1;  ///< may be -infinity
+    Real hi = 1;   ///< above lo; may be infinity
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

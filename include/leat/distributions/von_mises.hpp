@@ -48,8 +48,8 @@ struct von_mises_parameters {
     using distribution_type = von_mises<Real>;
     static constexpr const char* law_name = "von_mises";
 
-    Real mean = 0;
-    Real concentration = 1;
+    Real mean = 0;          ///< an angle, in radians
+    Real concentration = 1; ///< >= 0; 0 is uniform
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

@@ -38,8 +38,8 @@ struct weibull_parameters {
     using distribution_type = weibull<Real>;
     static constexpr const char* law_name = "weibull";
 
-    Real shape = 1;
-    Real scale = 1;
+    Real shape = 1; ///< > 0
+    Real scale = 1; ///< > 0
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {

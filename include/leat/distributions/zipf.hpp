@@ -46,8 +46,8 @@ struct zipf_parameters {
     using distribution_type = zipf<Int>;
     static constexpr const char* law_name = "zipf";
 
-    double exponent = 1;
-    Int n = 100;
+    double exponent = 1; ///< >= 0
+    Int n = 100;         ///< the greatest value, >= 1
 
     /// What is wrong with them, if anything.
     [[nodiscard]] constexpr detail::fault fault() const noexcept {
