@@ -175,7 +175,7 @@ TYPED_TEST(DiscreteRequirements, NotANumberIsRefusedInEveryRealField) {
                              std::numeric_limits<double>::infinity(), -1.0}) {
         parameters p = d.param();
         bool any = false;
-        parameters::each(p, [&](auto& field) {
+        parameters::each(p, [&](const char*, auto& field) {
             if constexpr (std::floating_point<std::remove_reference_t<decltype(field)>>) {
                 field = bad;
                 any = true;

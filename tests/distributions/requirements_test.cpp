@@ -273,11 +273,11 @@ template <class Parameters, class Visit>
 void with_each_field(const Parameters& good, double value, Visit visit) {
     int fields = 0;
     Parameters counted = good;
-    Parameters::each(counted, [&](auto&) { ++fields; });
+    Parameters::each(counted, [&](const char*, auto&) { ++fields; });
     for (int chosen = 0; chosen < fields; ++chosen) {
         Parameters p = good;
         int i = 0;
-        Parameters::each(p, [&](auto& field) {
+        Parameters::each(p, [&](const char*, auto& field) {
             if (i++ == chosen) {
                 using type = std::remove_reference_t<decltype(field)>;
                 if constexpr (!std::is_arithmetic_v<type>) { // a list: one of its entries

@@ -39,7 +39,7 @@ struct bernoulli_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.p);
+        visit("p", self.p);
     }
     friend constexpr bool operator==(const bernoulli_parameters&,
                                      const bernoulli_parameters&) = default;

@@ -56,8 +56,8 @@ struct beta_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.a);
-        visit(self.b);
+        visit("a", self.a);
+        visit("b", self.b);
     }
     friend constexpr bool operator==(const beta_parameters&, const beta_parameters&) = default;
 

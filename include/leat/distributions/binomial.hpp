@@ -55,8 +55,8 @@ struct binomial_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.n);
-        visit(self.p);
+        visit("n", self.n);
+        visit("p", self.p);
     }
     friend constexpr bool operator==(const binomial_parameters&,
                                      const binomial_parameters&) = default;

@@ -58,7 +58,7 @@ struct categorical_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.weights);
+        visit("weights", self.weights);
     }
     friend constexpr bool operator==(const categorical_parameters&,
                                      const categorical_parameters&) = default;

@@ -48,8 +48,8 @@ struct cauchy_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.location);
-        visit(self.scale);
+        visit("location", self.location);
+        visit("scale", self.scale);
     }
     friend constexpr bool operator==(const cauchy_parameters&, const cauchy_parameters&) = default;
 };

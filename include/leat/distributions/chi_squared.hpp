@@ -43,7 +43,7 @@ struct chi_squared_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.k);
+        visit("k", self.k);
     }
     friend constexpr bool operator==(const chi_squared_parameters&,
                                      const chi_squared_parameters&) = default;

@@ -54,7 +54,7 @@ struct dirichlet_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.alpha);
+        visit("alpha", self.alpha);
     }
     friend constexpr bool operator==(const dirichlet_parameters&,
                                      const dirichlet_parameters&) = default;

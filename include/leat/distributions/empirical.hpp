@@ -59,7 +59,7 @@ struct empirical_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.values);
+        visit("values", self.values);
     }
     friend constexpr bool operator==(const empirical_parameters&,
                                      const empirical_parameters&) = default;

@@ -51,8 +51,8 @@ struct erlang_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.k);
-        visit(self.rate);
+        visit("k", self.k);
+        visit("rate", self.rate);
     }
     friend constexpr bool operator==(const erlang_parameters&, const erlang_parameters&) = default;
 };

@@ -45,7 +45,7 @@ struct exponential_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.rate);
+        visit("rate", self.rate);
     }
     friend constexpr bool operator==(const exponential_parameters&,
                                      const exponential_parameters&) = default;

@@ -47,8 +47,8 @@ struct fisher_f_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.d1);
-        visit(self.d2);
+        visit("d1", self.d1);
+        visit("d2", self.d2);
     }
     friend constexpr bool operator==(const fisher_f_parameters&,
                                      const fisher_f_parameters&) = default;

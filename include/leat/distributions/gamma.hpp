@@ -57,8 +57,8 @@ struct gamma_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.shape);
-        visit(self.scale);
+        visit("shape", self.shape);
+        visit("scale", self.scale);
     }
     friend constexpr bool operator==(const gamma_parameters&, const gamma_parameters&) = default;
 };

@@ -65,7 +65,7 @@ struct geometric_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.p);
+        visit("p", self.p);
     }
     friend constexpr bool operator==(const geometric_parameters&,
                                      const geometric_parameters&) = default;

@@ -44,8 +44,8 @@ struct gumbel_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.location);
-        visit(self.scale);
+        visit("location", self.location);
+        visit("scale", self.scale);
     }
     friend constexpr bool operator==(const gumbel_parameters&, const gumbel_parameters&) = default;
 };

@@ -53,9 +53,9 @@ struct hypergeometric_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.population);
-        visit(self.successes);
-        visit(self.draws);
+        visit("population", self.population);
+        visit("successes", self.successes);
+        visit("draws", self.draws);
     }
     friend constexpr bool operator==(const hypergeometric_parameters&,
                                      const hypergeometric_parameters&) = default;

@@ -55,8 +55,8 @@ struct inverse_gaussian_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.mean);
-        visit(self.shape);
+        visit("mean", self.mean);
+        visit("shape", self.shape);
     }
     friend constexpr bool operator==(const inverse_gaussian_parameters&,
                                      const inverse_gaussian_parameters&) = default;

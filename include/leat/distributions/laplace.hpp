@@ -45,8 +45,8 @@ struct laplace_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.location);
-        visit(self.scale);
+        visit("location", self.location);
+        visit("scale", self.scale);
     }
     friend constexpr bool operator==(const laplace_parameters&,
                                      const laplace_parameters&) = default;

@@ -46,8 +46,8 @@ struct logistic_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.location);
-        visit(self.scale);
+        visit("location", self.location);
+        visit("scale", self.scale);
     }
     friend constexpr bool operator==(const logistic_parameters&,
                                      const logistic_parameters&) = default;

@@ -49,8 +49,8 @@ struct lognormal_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.log_mean);
-        visit(self.log_sd);
+        visit("log_mean", self.log_mean);
+        visit("log_sd", self.log_sd);
     }
     friend constexpr bool operator==(const lognormal_parameters&,
                                      const lognormal_parameters&) = default;

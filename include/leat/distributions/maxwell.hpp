@@ -46,7 +46,7 @@ struct maxwell_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.scale);
+        visit("scale", self.scale);
     }
     friend constexpr bool operator==(const maxwell_parameters&,
                                      const maxwell_parameters&) = default;

@@ -53,8 +53,8 @@ struct multinomial_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.n);
-        visit(self.weights);
+        visit("n", self.n);
+        visit("weights", self.weights);
     }
     friend constexpr bool operator==(const multinomial_parameters&,
                                      const multinomial_parameters&) = default;

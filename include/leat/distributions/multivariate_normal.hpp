@@ -60,8 +60,8 @@ struct multivariate_normal_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.mean);
-        visit(self.covariance);
+        visit("mean", self.mean);
+        visit("covariance", self.covariance);
     }
     friend constexpr bool operator==(const multivariate_normal_parameters&,
                                      const multivariate_normal_parameters&) = default;

@@ -100,8 +100,8 @@ struct negative_binomial_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.r);
-        visit(self.p);
+        visit("r", self.r);
+        visit("p", self.p);
     }
     friend constexpr bool operator==(const negative_binomial_parameters&,
                                      const negative_binomial_parameters&) = default;

@@ -50,8 +50,8 @@ struct normal_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.mean);
-        visit(self.sd);
+        visit("mean", self.mean);
+        visit("sd", self.sd);
     }
     friend constexpr bool operator==(const normal_parameters&, const normal_parameters&) = default;
 };

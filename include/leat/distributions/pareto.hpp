@@ -47,8 +47,8 @@ struct pareto_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.scale);
-        visit(self.shape);
+        visit("scale", self.scale);
+        visit("shape", self.shape);
     }
     friend constexpr bool operator==(const pareto_parameters&, const pareto_parameters&) = default;
 };

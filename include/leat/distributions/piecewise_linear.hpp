@@ -135,8 +135,8 @@ struct piecewise_linear_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.points);
-        visit(self.densities);
+        visit("points", self.points);
+        visit("densities", self.densities);
     }
     friend constexpr bool operator==(const piecewise_linear_parameters&,
                                      const piecewise_linear_parameters&) = default;

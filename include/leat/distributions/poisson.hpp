@@ -77,7 +77,7 @@ struct poisson_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.mean);
+        visit("mean", self.mean);
     }
     friend constexpr bool operator==(const poisson_parameters&,
                                      const poisson_parameters&) = default;

@@ -45,7 +45,7 @@ struct rayleigh_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.scale);
+        visit("scale", self.scale);
     }
     friend constexpr bool operator==(const rayleigh_parameters&,
                                      const rayleigh_parameters&) = default;

@@ -50,7 +50,7 @@ struct student_t_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.k);
+        visit("k", self.k);
     }
     friend constexpr bool operator==(const student_t_parameters&,
                                      const student_t_parameters&) = default;

@@ -64,9 +64,9 @@ struct triangular_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.lo);
-        visit(self.mode);
-        visit(self.hi);
+        visit("lo", self.lo);
+        visit("mode", self.mode);
+        visit("hi", self.hi);
     }
     friend constexpr bool operator==(const triangular_parameters&,
                                      const triangular_parameters&) = default;

@@ -96,10 +96,10 @@ struct truncated_normal_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.mean);
-        visit(self.sd);
-        visit(self.lo);
-        visit(self.hi);
+        visit("mean", self.mean);
+        visit("sd", self.sd);
+        visit("lo", self.lo);
+        visit("hi", self.hi);
     }
     friend constexpr bool operator==(const truncated_normal_parameters&,
                                      const truncated_normal_parameters&) = default;

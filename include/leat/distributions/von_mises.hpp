@@ -59,8 +59,8 @@ struct von_mises_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.mean);
-        visit(self.concentration);
+        visit("mean", self.mean);
+        visit("concentration", self.concentration);
     }
     friend constexpr bool operator==(const von_mises_parameters&,
                                      const von_mises_parameters&) = default;

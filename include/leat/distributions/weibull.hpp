@@ -48,8 +48,8 @@ struct weibull_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.shape);
-        visit(self.scale);
+        visit("shape", self.shape);
+        visit("scale", self.scale);
     }
     friend constexpr bool operator==(const weibull_parameters&,
                                      const weibull_parameters&) = default;

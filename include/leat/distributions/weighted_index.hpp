@@ -48,6 +48,7 @@ public:
 
     /// One outcome, of weight 1.
     constexpr weighted_index() : weighted_index(std::vector<double>{1}) {}
+    /// From weights >= 0, not all 0; they need not sum to 1.
     constexpr explicit weighted_index(const std::vector<double>& weights) : size_(weights.size()) {
         if (weights.empty()) {
             detail::refuse(name, "size of weights", 0, "must be at least 1");

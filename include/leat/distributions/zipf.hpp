@@ -59,8 +59,8 @@ struct zipf_parameters {
     }
     template <class Self, class Visit>
     static constexpr void each(Self& self, Visit visit) {
-        visit(self.exponent);
-        visit(self.n);
+        visit("exponent", self.exponent);
+        visit("n", self.n);
     }
     friend constexpr bool operator==(const zipf_parameters&, const zipf_parameters&) = default;
 };

@@ -5,7 +5,8 @@
 //     using distribution_type = L;
 //     static constexpr const char* law_name = "...";          as messages print it
 //     constexpr detail::fault fault() const noexcept;         what is wrong with them, if anything
-//     template <class Self, class Visit> static constexpr void each(Self&, Visit);   its fields
+//     template <class Self, class Visit> static constexpr void each(Self&, Visit);   its fields:
+//         visit("NAME", field) for each in turn
 // and a defaulted ==. It adds result_type, operator()(g), accessors, min, max, mean and variance,
 // and writes `using base::operator();`.
 
@@ -147,7 +148,7 @@ public:
     friend std::basic_ostream<Char, Traits>& operator<<(std::basic_ostream<Char, Traits>& os,
                                                         const Law& x) {
         bool first = true;
-        Parameters::each(x.param(), [&](const auto& field) {
+        Parameters::each(x.param(), [&](const char*, const auto& field) {
             if (!first) {
                 write_char(os, ' ');
             }
@@ -161,7 +162,7 @@ public:
     friend std::basic_istream<Char, Traits>& operator>>(std::basic_istream<Char, Traits>& is,
                                                         Law& x) {
         Parameters p{};
-        Parameters::each(p, [&](auto& field) { read_field(is, field); });
+        Parameters::each(p, [&](const char*, auto& field) { read_field(is, field); });
         if (!is.fail()) {
             if (p.fault().parameter == nullptr) {
                 x.param(p);

@@ -28,6 +28,7 @@ constexpr fault location_scale_fault(double location, double scale) noexcept {
     return first_of(unless_finite("location", location), unless_positive("scale", scale));
 }
 
+/// The common base of laws that are location + scale * a standard law.
 template <class Law, class Parameters>
 class location_scale : public law<Law, Parameters> {
     using base = law<Law, Parameters>;
