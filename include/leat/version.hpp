@@ -6,8 +6,11 @@
 #define LEAT_VERSION_HPP
 
 // Macros, so that a program can test them with #if.
+/// Changes where a seed's values do, or where programs must be edited.
 #define LEAT_VERSION_MAJOR 0
+/// Changes with what is added; below 1.0 it counts as the major one.
 #define LEAT_VERSION_MINOR 1
+/// Changes with repairs.
 #define LEAT_VERSION_PATCH 0
 
 #define LEAT_DETAIL_TEXT_OF(x) #x

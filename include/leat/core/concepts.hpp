@@ -10,7 +10,7 @@
 namespace leat {
 
 /// A source of uniform words: what ISO C++ calls a uniform random bit generator. Any engine of
-/// leat, any leat::stream, and any engine of <random> is one.
+/// leat, any leat::stream, and any engine of `<random>` is one.
 template <class G>
 concept random_words =
     std::invocable<G&> && std::unsigned_integral<std::invoke_result_t<G&>> && requires {

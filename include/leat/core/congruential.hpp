@@ -22,9 +22,9 @@ namespace leat {
 
 /// The constants of x -> multiplier * x + increment mod 2^bits.
 struct congruential {
-    std::uint64_t multiplier;
-    std::uint64_t increment;
-    int bits = 64; ///< 2 to 64
+    std::uint64_t multiplier; ///< what the state is multiplied by
+    std::uint64_t increment;  ///< what is then added
+    int bits = 64;            ///< 2 to 64
 
     friend constexpr bool operator==(const congruential&, const congruential&) = default;
 

@@ -19,6 +19,7 @@ namespace leat {
 /// The base of all errors leat throws. The text is held inside, so copying cannot fail.
 class error : public std::exception {
 public:
+    /// With this text, cut after 383 characters.
     explicit error(const char* text) noexcept {
         std::size_t i = 0;
         for (; text[i] != '\0' && i + 1 < sizeof text_; ++i) {
@@ -26,6 +27,7 @@ public:
         }
         text_[i] = '\0';
     }
+    /// The text.
     [[nodiscard]] const char* what() const noexcept override { return text_; }
 
 private:

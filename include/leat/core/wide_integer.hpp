@@ -23,8 +23,8 @@ namespace leat {
 /// An unsigned integer below 2^1024.
 class wide_integer {
 public:
-    static constexpr int digit_count = 32;
-    static constexpr int bits = 32 * digit_count;
+    static constexpr int digit_count = 32;        ///< digits of 32 bits
+    static constexpr int bits = 32 * digit_count; ///< 1024
 
     constexpr wide_integer() noexcept = default;
 
@@ -84,6 +84,7 @@ public:
                          std::uint64_t{digits_[static_cast<std::size_t>(2 * i + 1)]} << 32
                    : 0;
     }
+    /// Bit i, the lowest being bit 0.
     [[nodiscard]] constexpr bool bit(int i) const noexcept {
         return i < bits && ((digits_[static_cast<std::size_t>(i / 32)] >> (i % 32)) & 1u) != 0;
     }
@@ -95,6 +96,7 @@ public:
                    : 32 * (n - 1) +
                          static_cast<int>(std::bit_width(digits_[static_cast<std::size_t>(n - 1)]));
     }
+    /// Whether it is below 2^64.
     [[nodiscard]] constexpr bool fits_word() const noexcept { return size() <= 2; }
     /// The value as a 64-bit word; refused where it does not fit.
     constexpr explicit operator std::uint64_t() const {
@@ -105,6 +107,7 @@ public:
     }
 
     friend constexpr bool operator==(const wide_integer&, const wide_integer&) = default;
+    /// By value.
     friend constexpr std::strong_ordering operator<=>(const wide_integer& a,
                                                       const wide_integer& b) noexcept {
         for (std::size_t i = digit_count; i-- > 0;) {
@@ -115,6 +118,7 @@ public:
         return std::strong_ordering::equal;
     }
 
+    /// The sum; refused from 2^1024 on.
     friend constexpr wide_integer operator+(wide_integer a, const wide_integer& b) {
         std::uint64_t carry = 0;
         for (std::size_t i = 0; i < digit_count; ++i) {
@@ -127,6 +131,7 @@ public:
         }
         return a;
     }
+    /// The difference; refused below 0.
     friend constexpr wide_integer operator-(wide_integer a, const wide_integer& b) {
         if (a < b) {
             detail::refuse("wide_integer", "a difference would be negative");
@@ -139,6 +144,7 @@ public:
         }
         return a;
     }
+    /// The product; refused from 2^1024 on.
     friend constexpr wide_integer operator*(const wide_integer& a, const wide_integer& b) {
         wide_integer product;
         const std::size_t n = static_cast<std::size_t>(a.size());
@@ -190,10 +196,12 @@ public:
         }
         return r;
     }
+    /// The quotient, rounded down; division by 0 is refused.
     friend constexpr wide_integer operator/(const wide_integer& a, const wide_integer& b) {
         wide_integer remainder;
         return divide(a, b, remainder);
     }
+    /// The remainder; division by 0 is refused.
     friend constexpr wide_integer operator%(const wide_integer& a, const wide_integer& b) {
         if (a < b) {
             return a;
@@ -307,7 +315,7 @@ private:
 
 /// A distance of 2^k: `jump(engine, pow2(128))`. k has no upper bound; it is reduced by the period.
 struct power_of_two_distance {
-    std::uint64_t exponent;
+    std::uint64_t exponent; ///< k
 };
 
 /// The distance 2^k.

@@ -142,6 +142,7 @@ public:
     static constexpr wide_integer period() { return first::period() * second::period() >> 1; }
 
     constexpr mrg32k3a() noexcept { seed(); }
+    /// From any number; see the head of this file.
     constexpr explicit mrg32k3a(std::uint64_t value) noexcept { seed(value); }
     template <detail::seed_sequence_for<mrg32k3a> Sequence>
     constexpr explicit mrg32k3a(Sequence& sequence) {

@@ -85,8 +85,8 @@ class lehmer {
 public:
     using result_type = UInt;
     using state_type = UInt;
-    static constexpr UInt multiplier = multiplier_;
-    static constexpr UInt modulus = modulus_;
+    static constexpr UInt multiplier = multiplier_; ///< a
+    static constexpr UInt modulus = modulus_;       ///< m
     static constexpr std::uint64_t default_seed = 1;
     /// Whole bits that the states fill: floor(log2(modulus - 1)).
     static constexpr int state_bits = static_cast<int>(std::bit_width(UInt{modulus - 1})) - 1;

@@ -102,6 +102,7 @@ public:
     using state_type = std::array<word, Method::words>;
 
     static constexpr std::uint64_t default_seed = Method::default_seed;
+    /// The bits of a word.
     static constexpr int word_bits = 8 * static_cast<int>(sizeof(word));
     static constexpr int state_bits = word_bits * static_cast<int>(Method::words);
 

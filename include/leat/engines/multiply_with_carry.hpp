@@ -115,6 +115,7 @@ public:
     }
 
     constexpr multiply_with_carry() : multiply_with_carry(default_seed) {}
+    /// From any number; see the head of this file.
     constexpr explicit multiply_with_carry(std::uint64_t value) { seed(value); }
     template <detail::seed_sequence_for<multiply_with_carry> Sequence>
     constexpr explicit multiply_with_carry(Sequence& sequence) {

@@ -68,9 +68,9 @@ class philox4 {
 
 public:
     using result_type = UInt;
-    using key_type = std::array<UInt, 2>;
-    using counter_type = std::array<UInt, 4>;
-    using state_type = std::array<UInt, 7>; ///< key, counter, place in the block
+    using key_type = std::array<UInt, 2>;     ///< word 0 least significant
+    using counter_type = std::array<UInt, 4>; ///< word 0 least significant
+    using state_type = std::array<UInt, 7>;   ///< key, counter, place in the block
     static constexpr std::uint64_t default_seed = 20111115;
     static constexpr int state_bits = 2 * word_bits; ///< the key; seeding sets the counter to 0
 

@@ -50,9 +50,9 @@ public:
 
     /// The full state: the base engine after its last draw, the last value, the table.
     struct state_type {
-        Engine base;
-        result_type last;
-        std::array<result_type, K> table;
+        Engine base;                      ///< after its last draw
+        result_type last;                 ///< the last value given
+        std::array<result_type, K> table; ///< the draws kept
 
         friend constexpr bool operator==(const state_type& a, const state_type& b) {
             return a.base == b.base && a.last == b.last && a.table == b.table;
@@ -156,9 +156,9 @@ public:
 
     /// The full state: both engines after their last draws, and the table.
     struct state_type {
-        Engine base;
-        Selector selector;
-        std::array<result_type, K> table;
+        Engine base;                      ///< after its last draw
+        Selector selector;                ///< after its last draw
+        std::array<result_type, K> table; ///< the draws kept
 
         friend constexpr bool operator==(const state_type& a, const state_type& b) {
             return a.base == b.base && a.selector == b.selector && a.table == b.table;

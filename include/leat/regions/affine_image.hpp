@@ -43,7 +43,7 @@ class affine_image : public detail::region_base<affine_image<Region>, typename R
 
 public:
     using typename base::point_type;
-    using matrix_type = std::array<std::array<Real, n>, n>;
+    using matrix_type = std::array<std::array<Real, n>, n>; ///< rows
 
     /// The matrix by rows.
     constexpr affine_image(const Region& region, const std::type_identity_t<matrix_type>& matrix,

@@ -14,8 +14,8 @@ namespace leat {
 /// The corners of a box that a region fits in.
 template <class Real, std::size_t N>
 struct region_bounds {
-    std::array<Real, N> low;
-    std::array<Real, N> high;
+    std::array<Real, N> low;  ///< the least coordinates
+    std::array<Real, N> high; ///< the greatest
 
     friend constexpr bool operator==(const region_bounds&, const region_bounds&) = default;
 

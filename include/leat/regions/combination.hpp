@@ -51,6 +51,7 @@ class either : public detail::region_base<either<First, Others...>, typename Fir
 public:
     using point_type = typename First::point_type;
 
+    /// Of parts that do not overlap: where they do, points would be twice as likely.
     explicit constexpr either(const First& first, const Others&... others)
         : regions_(first, others...) {
         this->bounds_ = first.bounds();

@@ -96,6 +96,7 @@ public:
     }
 
     [[nodiscard]] constexpr point_type centre() const noexcept { return centre_; }
+    /// The semi-axes along x, y and z.
     [[nodiscard]] constexpr point_type semi_axes() const noexcept { return semi_; }
 
     friend constexpr bool operator==(const ellipsoid&, const ellipsoid&) = default;

@@ -53,8 +53,9 @@ class polygon : public detail::region_base<polygon<Real>, Real, 2> {
 
 public:
     using typename base::point_type;
-    using ring_type = std::vector<std::array<Real, 2>>;
+    using ring_type = std::vector<std::array<Real, 2>>; ///< the corners in order, either way round
 
+    /// From the outer ring and the rings of holes in it.
     explicit polygon(std::vector<std::array<Real, 2>> ring,
                      std::vector<std::vector<std::array<Real, 2>>> holes = {})
         : ring_(std::move(ring)), holes_(std::move(holes)) {
@@ -103,7 +104,9 @@ public:
         return detail::saturated<Real>(frame_.half_area(doubled_area_));
     }
 
+    /// The outer ring.
     [[nodiscard]] const ring_type& ring() const noexcept { return ring_; }
+    /// The rings of the holes.
     [[nodiscard]] const std::vector<ring_type>& holes() const noexcept { return holes_; }
     /// How many triangles it was cut into: the vertices, and two more a hole, less two.
     [[nodiscard]] std::size_t triangles() const noexcept { return triangles_.size(); }

@@ -41,6 +41,7 @@ class polyline : public detail::region_base<polyline<N, Real>, Real, N, 1> {
 public:
     using typename base::point_type;
 
+    /// From two vertices or more, in order.
     explicit polyline(std::vector<point_type> vertices) : vertices_(std::move(vertices)) {
         if (vertices_.size() < 2) {
             detail::refuse("polyline", "vertices", static_cast<std::uint64_t>(vertices_.size()),
@@ -103,6 +104,7 @@ public:
     /// The length, within n ulp; saturated where it does not fit in Real.
     [[nodiscard]] Real measure() const noexcept { return length_; }
 
+    /// The vertices in order.
     [[nodiscard]] const std::vector<point_type>& vertices() const noexcept { return vertices_; }
 
     friend bool operator==(const polyline&, const polyline&) = default;

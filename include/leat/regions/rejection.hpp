@@ -36,18 +36,18 @@ namespace leat {
 /// A point and the trials that it took, itself included.
 template <class Point>
 struct counted_point {
-    Point point;
-    std::uint32_t trials;
+    Point point;          ///< the point
+    std::uint32_t trials; ///< how many it took
 };
 
 /// The share of trials accepted, and the ends of its interval at 95 %: Wilson's, which is sound at
 /// shares near 0 and 1 too (E. B. Wilson, J. Amer. Stat. Assoc. 22, 1927).
 struct acceptance {
-    double share;
-    double low;
-    double high;
-    std::uint64_t accepted;
-    std::uint64_t trials;
+    double share;           ///< accepted / trials
+    double low;             ///< the lower end
+    double high;            ///< the upper end
+    std::uint64_t accepted; ///< how many trials were accepted
+    std::uint64_t trials;   ///< how many were made
 };
 
 namespace detail {
@@ -172,6 +172,7 @@ public:
                         std::type_identity_t<typename Region::real_type> measure)
         : base(region, measure), predicate_(predicate) {}
 
+    /// Whether region and predicate are equal, where predicates can be compared.
     friend constexpr bool
     operator==(const rejection& a,
                const rejection& b) noexcept requires std::equality_comparable<Predicate> {

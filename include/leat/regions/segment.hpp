@@ -76,7 +76,9 @@ public:
         return detail::saturated<Real>(piece_.length());
     }
 
+    /// One end.
     [[nodiscard]] constexpr point_type a() const noexcept { return piece_.from; }
+    /// The other end.
     [[nodiscard]] constexpr point_type b() const noexcept { return piece_.to; }
 
     friend constexpr bool operator==(const segment&, const segment&) = default;

@@ -38,7 +38,7 @@ class simplex : public detail::region_base<simplex<N, Real>, Real, N> {
 
 public:
     using typename base::point_type;
-    using corners_type = std::array<point_type, N + 1>;
+    using corners_type = std::array<point_type, N + 1>; ///< in any order
 
     /// The unit simplex; its faces do not belong to it.
     constexpr simplex() noexcept { this->bounds_ = shape_.box(); }

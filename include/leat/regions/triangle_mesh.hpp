@@ -46,8 +46,9 @@ class triangle_mesh : public detail::region_base<triangle_mesh<Real>, Real, 3, 2
 
 public:
     using typename base::point_type;
-    using indices = std::array<std::uint32_t, 3>;
+    using indices = std::array<std::uint32_t, 3>; ///< of a triangle's vertices
 
+    /// From vertices, and for each triangle the indices of its three.
     triangle_mesh(std::vector<std::array<Real, 3>> vertices, std::vector<indices> triangles)
         : vertices_(std::move(vertices)), triangles_(std::move(triangles)) {
         require_triangles();
@@ -116,7 +117,9 @@ public:
     /// Real.
     [[nodiscard]] Real measure() const noexcept { return detail::saturated<Real>(area_); }
 
+    /// The vertices.
     [[nodiscard]] const std::vector<point_type>& vertices() const noexcept { return vertices_; }
+    /// The triangles' indices.
     [[nodiscard]] const std::vector<indices>& triangles() const noexcept { return triangles_; }
 
     friend bool operator==(const triangle_mesh& a, const triangle_mesh& b) noexcept {

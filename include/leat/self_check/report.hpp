@@ -35,9 +35,12 @@ struct self_check_finding {
 /// The result of `self_check()`. True (`ok()`) if nothing failed; there may still be notes.
 class self_check_report {
 public:
-    static constexpr std::size_t capacity = 256; // above what each_golden and the other checks find
+    /// How many findings it has room for: more than all checks together can find.
+    static constexpr std::size_t capacity = 256;
 
+    /// Whether nothing failed.
     [[nodiscard]] constexpr bool ok() const noexcept { return failures_ == 0; }
+    /// The same.
     constexpr explicit operator bool() const noexcept { return ok(); }
 
     /// What was found, failures and notes, in the order in which it was looked at.
@@ -49,6 +52,7 @@ public:
     /// How many findings were left out.
     [[nodiscard]] constexpr std::uint64_t left_out() const noexcept { return left_out_; }
 
+    /// Takes a finding in, or counts it where there is no room.
     constexpr void add(const self_check_finding& finding) noexcept {
         failures_ += finding.failed ? 1u : 0u;
         if (size_ == capacity) {

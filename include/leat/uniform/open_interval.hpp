@@ -42,8 +42,8 @@ template <detail::portable_real Real = double, ends Ends = ends::open>
 struct uniform_parameters {
     using distribution_type = uniform<Real, Ends>;
 
-    Real a = 0;
-    Real b = 1;
+    Real a = 0; ///< one end
+    Real b = 1; ///< the other, above a
 
     friend constexpr bool operator==(const uniform_parameters&,
                                      const uniform_parameters&) = default;

@@ -154,8 +154,8 @@ template <detail::number_integer Int = int>
 struct uniform_integer_parameters {
     using distribution_type = uniform_integer<Int>;
 
-    Int lo = 0;
-    Int hi = std::numeric_limits<Int>::max();
+    Int lo = 0;                               ///< the least value
+    Int hi = std::numeric_limits<Int>::max(); ///< the greatest, not below lo
 
     friend constexpr bool operator==(const uniform_integer_parameters&,
                                      const uniform_integer_parameters&) = default;
@@ -170,6 +170,7 @@ public:
 
     /// 0 to the largest value of the type.
     constexpr uniform_integer() noexcept = default;
+    /// Both ends in.
     constexpr uniform_integer(Int lo, Int hi)
         : uniform_integer(uniform_integer_parameters<Int>{lo, hi}) {}
     constexpr explicit uniform_integer(const uniform_integer_parameters<Int>& p) : range_(p) {

@@ -43,7 +43,9 @@ public:
 
     [[nodiscard]] constexpr bounds_type bounds() const noexcept { return bounds_; }
     [[nodiscard]] constexpr point_type centre() const noexcept { return centre_; }
+    /// The first semi-axis.
     [[nodiscard]] constexpr Real semi_x() const noexcept { return semi_[0]; }
+    /// The second semi-axis.
     [[nodiscard]] constexpr Real semi_y() const noexcept { return semi_[1]; }
     /// The angle from the x axis to the first semi-axis, counter-clockwise, in radians.
     [[nodiscard]] constexpr Real rotation() const noexcept { return rotation_; }
