@@ -110,6 +110,8 @@ public:
     /// The four words of the lane to be drawn next.
     using state_type = xoshiro256_plus_plus::state_type;
 
+    /// The name under which it is saved.
+    static constexpr const char* engine_name = "xoshiro256_braid";
     static constexpr std::uint64_t default_seed = xoshiro256_plus_plus::default_seed;
     static constexpr int state_bits = xoshiro256_plus_plus::state_bits;
 
@@ -173,11 +175,16 @@ public:
         }
     }
 
-    /// Skips n words, in O(log n).
-    constexpr void discard(unsigned long long n) { advance(wide_integer{n}); }
+    /// Skips n words, in O(log n). Like advance a template, so that only a program that jumps
+    /// compiles the derivation of xoshiro256's characteristic polynomial.
+    template <int = 0>
+    constexpr void discard(unsigned long long n) {
+        advance(wide_integer{n});
+    }
 
     /// Skips any number of words, below the period or not, in time logarithmic in it: whole rounds
     /// by a jump of all lanes, the rest by moving on among them.
+    template <class Step = detail::xoshiro256_step>
     constexpr void advance(const wide_integer& distance) {
         const wide_integer rounds = distance >> 4;
         // A jump costs about as much as this many rounds.
@@ -188,7 +195,7 @@ public:
             }
         } else {
             lanes_ = detail::apply_polynomial<detail::braid_step>(
-                detail::characteristic<detail::xoshiro256_step>.power_of_x(rounds), lanes_);
+                detail::characteristic<Step>.power_of_x(rounds), lanes_);
         }
         next_ += static_cast<std::uint32_t>(distance.word(0) & 15u);
         if (next_ >= detail::braid_lanes) {

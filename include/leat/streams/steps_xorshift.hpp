@@ -19,6 +19,7 @@
 
 #include <array>
 #include <bit>
+#include <concepts>
 #include <cstddef>
 #include <cstdint>
 #include <optional>
@@ -149,16 +150,14 @@ constexpr std::uint64_t steps_of_one_word(typename Step::word from, typename Ste
 
 } // namespace detail
 
-/// The d below the period for which d draws lead from the one engine to the other.
-constexpr std::optional<wide_integer> steps_between(const xorshift32& from, const xorshift32& to) {
-    return wide_integer{
-        detail::steps_of_one_word<detail::xorshift32_method>(from.state()[0], to.state()[0])};
-}
-
-/// The d below the period for which d draws lead from the one engine to the other.
-constexpr std::optional<wide_integer> steps_between(const xorshift64& from, const xorshift64& to) {
-    return wide_integer{
-        detail::steps_of_one_word<detail::xorshift64_method>(from.state()[0], to.state()[0])};
+/// The d below the period for which d draws lead from the one engine to the other; for xorshift32
+/// and xorshift64.
+template <class Method>
+requires std::same_as<linear_engine<Method>, xorshift32> ||
+    std::same_as<linear_engine<Method>, xorshift64>
+constexpr std::optional<wide_integer> steps_between(const linear_engine<Method>& from,
+                                                    const linear_engine<Method>& to) {
+    return wide_integer{detail::steps_of_one_word<Method>(from.state()[0], to.state()[0])};
 }
 
 } // namespace leat

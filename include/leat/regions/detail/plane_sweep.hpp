@@ -15,7 +15,6 @@
 #include "leat/regions/detail/merge_sort.hpp"
 #include "leat/regions/detail/orientation.hpp"
 #include "leat/regions/detail/plane_triangle.hpp"
-#include "leat/regions/detail/ring_names.hpp"
 
 #include <cstddef>
 #include <cstdint>
@@ -26,12 +25,14 @@
 namespace leat::detail {
 
 /// Does its work when constructed. Vertices are named by their places in `points`; an edge by the
-/// vertex that it leaves when the inside is kept on the left.
+/// vertex that it leaves when the inside is kept on the left. A template, so that only a program
+/// with polygons compiles it.
+template <class Names>
 class plane_sweep {
 public:
     using index = std::uint32_t;
 
-    plane_sweep(const std::vector<plane_point>& points, const ring_names& names)
+    plane_sweep(const std::vector<plane_point>& points, const Names& names)
         : points_(points),
           names_(names),
           next_(points.size()),
@@ -64,6 +65,7 @@ private:
         bool operator()(index e, index f) const { return sweep->is_below(e, f); }
     };
     using sweep_line = std::set<index, below_edge>;
+    using iterator = typename sweep_line::iterator;
 
     /// One vertex of a chain.
     struct link {
@@ -79,8 +81,8 @@ private:
         index newest;
     };
 
-    static sweep_line::iterator below(sweep_line::iterator it) { return --it; }
-    static sweep_line::iterator above(sweep_line::iterator it) { return ++it; }
+    static iterator below(iterator it) { return --it; }
+    static iterator above(iterator it) { return ++it; }
 
     [[nodiscard]] bool before(index a, index b) const noexcept { return rank_[a] < rank_[b]; }
     [[nodiscard]] double turned(index a, index b, index c) const noexcept {
@@ -177,7 +179,7 @@ private:
         names_.refuse_crossing(a, b, c, d);
     }
 
-    void require_apart_from_below(sweep_line::iterator it) const {
+    void require_apart_from_below(iterator it) const {
         if (it != line_.begin() && it != line_.end()) {
             require_apart(*below(it), *it);
         }
@@ -305,12 +307,12 @@ private:
     }
 
     const std::vector<plane_point>& points_;
-    const ring_names& names_;
+    const Names& names_;
     std::vector<index> next_;
     std::vector<index> previous_;
     std::vector<index> rank_;
-    std::vector<sweep_line::iterator> places_; // of the edges on the line
-    std::vector<chain> chains_;                // above lower edges on the line
+    std::vector<iterator> places_; // of the edges on the line
+    std::vector<chain> chains_;    // above lower edges on the line
     std::vector<link> links_;
     sweep_line line_;
     std::vector<plane_triangle> triangles_;
