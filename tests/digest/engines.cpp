@@ -2,6 +2,7 @@
 
 #include "leat/engines.hpp"
 #include "digest/digest.hpp"
+#include "leat/compat/historical.hpp"
 
 #include <string>
 
@@ -80,6 +81,10 @@ void engines() {
     engine<leat::shuffled<leat::xoshiro256_plus, 64>>("engine.shuffled.xoshiro256_plus");
     engine<leat::shuffled_by<leat::minimal_standard, leat::minimal_standard_48271, 128>>(
         "engine.shuffled_by.minimal_standard");
+    engine<leat::iso_c_sample>("engine.iso_c_sample");
+    engine<leat::posix48>("engine.posix48");
+    engine<leat::additive_feedback31>("engine.additive_feedback31");
+    engine<leat::additive_feedback63>("engine.additive_feedback63");
 }
 
 } // namespace digests

@@ -4,6 +4,7 @@
 #ifndef LEAT_TESTS_SUPPORT_ENGINE_LIST_HPP
 #define LEAT_TESTS_SUPPORT_ENGINE_LIST_HPP
 
+#include "leat/compat/historical.hpp"
 #include "leat/engines/braid.hpp"
 #include "leat/engines/combined_recursive.hpp"
 #include "leat/engines/counter.hpp"
@@ -45,7 +46,12 @@ using engines = ::testing::Types<                          //
     leat::xoshiro256_star_star,                            //
     leat::xoshiro256_braid,                                //
     leat::philox4x32,                                      //
-    leat::philox4x64, leat::shuffled<leat::minimal_standard, 256>,
+    leat::philox4x64,                                      //
+    leat::iso_c_sample,                                    //
+    leat::posix48,                                         //
+    leat::additive_feedback31,                             //
+    leat::additive_feedback63,                             //
+    leat::shuffled<leat::minimal_standard, 256>,           //
     leat::shuffled_by<leat::minimal_standard_48271, leat::minimal_standard, 128>>;
 
 /// What an engine must refuse: seeds, and states in the form of its text (whole words).
@@ -86,6 +92,21 @@ inline refusals refused_by(const leat::mrg32k3a*) {
     return {{},
             {"0 0 0 1 2 3", "1 2 3 0 0 0", "4294967087 1 1 1 1 1", "1 1 4294967087 1 1 1",
              "1 1 1 4294944443 1 1", "1 1 1 1 1 4294944443"}};
+}
+inline refusals refused_by(const leat::iso_c_sample*) { return {{}, {"2147483648"}}; }
+inline refusals refused_by(const leat::posix48*) { return {{}, {"1 2 65536", "65536 0 0"}}; }
+/// `first`, then words of 4: without an odd word the cycle is a shorter one.
+inline std::string then_fours(std::string first, int words) {
+    for (int i = 1; i < words; ++i) {
+        first += " 4";
+    }
+    return first;
+}
+inline refusals refused_by(const leat::additive_feedback31*) {
+    return {{}, {then_fours("4", 31), then_fours("4294967297", 31)}};
+}
+inline refusals refused_by(const leat::additive_feedback63*) {
+    return {{}, {then_fours("4", 63), then_fours("4294967297", 63)}};
 }
 template <std::size_t K>
 refusals refused_by(const leat::shuffled<leat::minimal_standard, K>*) {

@@ -12,6 +12,7 @@
 #define LEAT_SELF_CHECK_GOLDEN_HPP
 
 #include "leat/bulk.hpp"
+#include "leat/compat/historical.hpp"
 #include "leat/distributions.hpp"
 #include "leat/engines.hpp"
 #include "leat/regions.hpp"
@@ -175,6 +176,10 @@ inline void each_golden(golden_line line, void* context) {
     golden.engine<shuffled<minimal_standard, 256>>("engine.shuffled", 0x67c9a3c1037e757eu);
     golden.engine<shuffled_by<minimal_standard, minimal_standard_48271, 128>>("engine.shuffled_by",
                                                                               0xae21941d21ca1e62u);
+    golden.engine<iso_c_sample>("engine.iso_c_sample", 0xc2a9dd47fce0df5bu);
+    golden.engine<posix48>("engine.posix48", 0x3542e9f8381f60fau);
+    golden.engine<additive_feedback31>("engine.additive_feedback31", 0x8894bba86f5d3a75u);
+    golden.engine<additive_feedback63>("engine.additive_feedback63", 0xa44966b51ca002d4u);
 
     golden.stream("stream.index", 0x5d1332143dbe5755u,
                   [](const source& study) { return study.stream("failures", 3, 4); });
