@@ -120,6 +120,16 @@ public:
     [[nodiscard]] static constexpr Int min() noexcept { return 0; }
     [[nodiscard]] constexpr Int max() const noexcept { return static_cast<Int>(size_ - 1); }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "weighted_index";
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"weights"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(weights());
+    }
+
     friend constexpr bool operator==(const weighted_index&, const weighted_index&) = default;
 
     /// Writes the number of weights and the weights, to the bit.

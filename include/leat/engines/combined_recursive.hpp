@@ -133,6 +133,8 @@ public:
     using result_type = std::uint32_t;
     /// s10, s11, s12, s20, s21, s22.
     using state_type = std::array<std::uint32_t, 6>;
+    /// The name under which it is saved.
+    static constexpr const char* engine_name = "mrg32k3a";
     static constexpr std::uint64_t default_seed = 12345;
     /// Whole bits that the states fill.
     static constexpr int state_bits = 191;

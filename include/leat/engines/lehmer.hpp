@@ -87,6 +87,10 @@ public:
     using state_type = UInt;
     static constexpr UInt multiplier = multiplier_; ///< a
     static constexpr UInt modulus = modulus_;       ///< m
+    /// The name under which it is saved.
+    static constexpr const char* engine_name = "lehmer";
+    /// The parameters that belong to its name.
+    static constexpr UInt engine_parameters[] = {multiplier, modulus};
     static constexpr std::uint64_t default_seed = 1;
     /// Whole bits that the states fill: floor(log2(modulus - 1)).
     static constexpr int state_bits = static_cast<int>(std::bit_width(UInt{modulus - 1})) - 1;

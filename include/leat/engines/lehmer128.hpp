@@ -61,6 +61,8 @@ class lehmer128 {
 public:
     using result_type = std::uint64_t;
     using state_type = std::array<std::uint64_t, 2>; ///< low word, high word
+    /// The name under which it is saved.
+    static constexpr const char* engine_name = "lehmer128";
     static constexpr std::uint64_t default_seed = 1;
     static constexpr int state_bits = 128; ///< the lowest of them always one
     /// 0x12e15e35b500f16e2e714eb2b37916a5, low word first.

@@ -101,6 +101,8 @@ public:
     /// The state's words in the paper's order.
     using state_type = std::array<word, Method::words>;
 
+    /// The name under which it is saved.
+    static constexpr const char* engine_name = Method::name;
     static constexpr std::uint64_t default_seed = Method::default_seed;
     /// The bits of a word.
     static constexpr int word_bits = 8 * static_cast<int>(sizeof(word));

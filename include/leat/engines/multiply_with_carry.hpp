@@ -89,6 +89,10 @@ public:
 
     /// The greatest carry: the sum of the multipliers less 1.
     static constexpr UInt greatest_carry = static_cast<UInt>((a + ...) - 1);
+    /// The name under which it is saved.
+    static constexpr const char* engine_name = "multiply_with_carry";
+    /// The parameters that belong to its name.
+    static constexpr UInt engine_parameters[] = {a...};
     static constexpr std::uint64_t default_seed = 1;
 
     /// The words, oldest first, then the carry.

@@ -71,6 +71,8 @@ public:
     using key_type = std::array<UInt, 2>;     ///< word 0 least significant
     using counter_type = std::array<UInt, 4>; ///< word 0 least significant
     using state_type = std::array<UInt, 7>;   ///< key, counter, place in the block
+    /// The name under which it is saved.
+    static constexpr const char* engine_name = constants::name;
     static constexpr std::uint64_t default_seed = 20111115;
     static constexpr int state_bits = 2 * word_bits; ///< the key; seeding sets the counter to 0
 

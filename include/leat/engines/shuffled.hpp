@@ -45,6 +45,8 @@ class shuffled {
 
 public:
     using result_type = typename Engine::result_type;
+    /// The name under which it is saved.
+    static constexpr const char* engine_name = "shuffled";
     static constexpr std::uint64_t default_seed = Engine::default_seed;
     static constexpr int state_bits = detail::state_bits_of<Engine>(); ///< those of the base engine
 
@@ -151,6 +153,8 @@ template <class Engine, class Selector, std::size_t K>
 class shuffled_by {
 public:
     using result_type = typename Engine::result_type;
+    /// The name under which it is saved.
+    static constexpr const char* engine_name = "shuffled_by";
     static constexpr std::uint64_t default_seed = 1;
     static constexpr int state_bits = detail::state_bits_of<Engine>(); ///< those of the base engine
 

@@ -32,6 +32,8 @@ class splitmix64 {
 public:
     using result_type = std::uint64_t;
     using state_type = std::uint64_t;
+    /// The name under which it is saved.
+    static constexpr const char* engine_name = "splitmix64";
     static constexpr std::uint64_t default_seed = 0;
     static constexpr int state_bits = 64;
     /// The step of the counter: the odd number nearest to 2^64 / golden ratio.

@@ -116,6 +116,16 @@ public:
     /// The region that this is the image of.
     [[nodiscard]] constexpr const Region& region() const noexcept { return region_; }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "affine_image";
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"region", "matrix", "shift"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(region_, matrix_, shift_);
+    }
+
     friend constexpr bool operator==(const affine_image& a, const affine_image& b) noexcept {
         return a.region_ == b.region_ && a.matrix_ == b.matrix_ && a.shift_ == b.shift_;
     }

@@ -35,6 +35,9 @@ public:
                       Inner inner, Outer outer)
         : base(centre.value, static_cast<Real>(inner), static_cast<Real>(outer)) {}
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "annulus";
+
     friend constexpr bool operator==(const annulus&, const annulus&) = default;
 
 private:

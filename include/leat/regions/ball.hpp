@@ -89,6 +89,16 @@ public:
     [[nodiscard]] constexpr point_type centre() const noexcept { return centre_; }
     [[nodiscard]] constexpr Real radius() const noexcept { return radius_; }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "ball";
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"centre", "radius"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(centre_, radius_);
+    }
+
     friend constexpr bool operator==(const ball&, const ball&) = default;
 
 private:

@@ -95,6 +95,16 @@ public:
     [[nodiscard]] constexpr point_type low() const noexcept { return this->bounds_.low; }
     [[nodiscard]] constexpr point_type high() const noexcept { return this->bounds_.high; }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "box";
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"low", "high"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(this->bounds_.low, this->bounds_.high);
+    }
+
     friend constexpr bool operator==(const box&, const box&) = default;
 
 private:

@@ -118,6 +118,17 @@ public:
     [[nodiscard]] constexpr Real radius() const noexcept { return surface_.radius(); }
     [[nodiscard]] constexpr Real half_angle() const noexcept { return half_angle_; }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "cap";
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"centre", "radius", "axis", "half_angle"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(surface_.centre(), surface_.radius(), frame_.template given<Real>(),
+                   half_angle_);
+    }
+
     friend constexpr bool operator==(const cap&, const cap&) = default;
 
 private:

@@ -105,6 +105,16 @@ public:
         return regions_;
     }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "either";
+    /// What its constructor takes, as a list.
+    static constexpr const char* list_name = "parts";
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return std::apply(use, regions_);
+    }
+
     friend constexpr bool operator==(const either&, const either&) = default;
 
 private:
@@ -139,6 +149,20 @@ public:
 
     /// The region that is left out.
     [[nodiscard]] constexpr const B& removed() const noexcept { return removed_; }
+
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "without";
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"region", "removed", "measure"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(this->region(), removed_, this->known_measure());
+    }
+    /// From those arguments; a measure of 0 is none.
+    static constexpr without from_arguments(const A& a, const B& b, typename A::real_type measure) {
+        return measure == 0 ? without(a, b) : without(a, b, measure);
+    }
 
     friend constexpr bool operator==(const without& a, const without& b) noexcept {
         return a.region() == b.region() && a.removed_ == b.removed_;

@@ -87,6 +87,9 @@ public:
                                        detail::split(double{this->height()}));
     }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "cone";
+
     friend constexpr bool operator==(const cone&, const cone&) = default;
 
 private:

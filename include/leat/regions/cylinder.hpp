@@ -81,6 +81,9 @@ public:
                                        detail::split(double{this->height()}));
     }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "cylinder";
+
     friend constexpr bool operator==(const cylinder&, const cylinder&) = default;
 
 private:

@@ -93,6 +93,14 @@ public:
         return base::one_over_pi / 4;
     }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "isotropic_direction";
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use();
+    }
+
     friend constexpr bool operator==(const isotropic_direction&,
                                      const isotropic_direction&) = default;
 };
@@ -110,7 +118,8 @@ public:
     constexpr direction_in_cone(const std::type_identity_t<detail::point_argument<Real, 3>>& axis,
                                 Angle half_angle)
         : frame_("direction_in_cone", "axis", axis.value),
-          angle_("direction_in_cone", static_cast<Real>(half_angle)) {}
+          half_angle_(static_cast<Real>(half_angle)),
+          angle_("direction_in_cone", half_angle_) {}
 
     /// A unit vector.
     template <random_words G>
@@ -126,12 +135,23 @@ public:
         return inside ? (real(base::one_over_pi) / (real(2) * angle_.versine())).value : 0;
     }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "direction_in_cone";
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"axis", "half_angle"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(frame_.template given<Real>(), half_angle_);
+    }
+
     friend constexpr bool operator==(const direction_in_cone&, const direction_in_cone&) = default;
 
 private:
     using typename base::real;
 
     detail::axis_frame frame_;
+    Real half_angle_;
     detail::cap_angle angle_;
 };
 
@@ -160,6 +180,16 @@ public:
     [[nodiscard]] constexpr double density(const point_type& p) const noexcept {
         const real cosine = frame_.along(base::wide(p));
         return cosine > 0.0 ? (cosine * base::one_over_pi).value : 0;
+    }
+
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "lambert_direction";
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"normal"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(frame_.template given<Real>());
     }
 
     friend constexpr bool operator==(const lambert_direction&, const lambert_direction&) = default;
@@ -218,6 +248,16 @@ public:
     }
 
     [[nodiscard]] constexpr Real concentration() const noexcept { return concentration_; }
+
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "von_mises_fisher";
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"axis", "concentration"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(frame_.template given<Real>(), concentration_);
+    }
 
     friend constexpr bool operator==(const von_mises_fisher&, const von_mises_fisher&) = default;
 

@@ -85,6 +85,9 @@ public:
         return detail::point_as<Vec>((*this)(g));
     }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "ellipse";
+
     friend constexpr bool operator==(const ellipse&, const ellipse&) = default;
 
 private:
@@ -153,6 +156,9 @@ public:
 
     /// The share of trials that succeed: the ellipse's area over that of its box.
     [[nodiscard]] constexpr Real acceptance() const noexcept { return acceptance_; }
+
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "ellipse_by_rejection";
 
     friend constexpr bool operator==(const ellipse_by_rejection&,
                                      const ellipse_by_rejection&) = default;

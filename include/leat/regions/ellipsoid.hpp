@@ -99,6 +99,16 @@ public:
     /// The semi-axes along x, y and z.
     [[nodiscard]] constexpr point_type semi_axes() const noexcept { return semi_; }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "ellipsoid";
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"centre", "semi_axes"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(centre_, semi_);
+    }
+
     friend constexpr bool operator==(const ellipsoid&, const ellipsoid&) = default;
 
 private:

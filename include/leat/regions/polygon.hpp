@@ -111,6 +111,16 @@ public:
     /// How many triangles it was cut into: the vertices, and two more a hole, less two.
     [[nodiscard]] std::size_t triangles() const noexcept { return triangles_.size(); }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "polygon";
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"ring", "holes"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(ring_, holes_);
+    }
+
     friend bool operator==(const polygon& a, const polygon& b) noexcept {
         return a.ring_ == b.ring_ && a.holes_ == b.holes_;
     }

@@ -107,6 +107,16 @@ public:
     /// The vertices in order.
     [[nodiscard]] const std::vector<point_type>& vertices() const noexcept { return vertices_; }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "polyline";
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"vertices"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(vertices_);
+    }
+
     friend bool operator==(const polyline&, const polyline&) = default;
 
 private:

@@ -143,6 +143,9 @@ protected:
         }
     }
 
+    /// The measure that was given, or 0.
+    [[nodiscard]] constexpr Real known_measure() const noexcept { return measure_; }
+
 private:
     static constexpr std::uint32_t most_trials = 700000; // (1 - 1e-4)^700000 < 2^-100
 
@@ -171,6 +174,21 @@ public:
     constexpr rejection(const Region& region, Predicate predicate,
                         std::type_identity_t<typename Region::real_type> measure)
         : base(region, measure), predicate_(predicate) {}
+
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "rejection";
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"region", "predicate", "measure"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(this->region(), predicate_, this->known_measure());
+    }
+    /// From those arguments; a measure of 0 is none.
+    static constexpr rejection from_arguments(const Region& region, Predicate predicate,
+                                              typename Region::real_type measure) {
+        return measure == 0 ? rejection(region, predicate) : rejection(region, predicate, measure);
+    }
 
     /// Whether region and predicate are equal, where predicates can be compared.
     friend constexpr bool

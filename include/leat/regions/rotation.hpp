@@ -83,6 +83,14 @@ public:
         return turned;
     }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "rotation";
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use();
+    }
+
     friend constexpr bool operator==(const rotation&, const rotation&) = default;
 
 private:

@@ -113,6 +113,16 @@ public:
     [[nodiscard]] constexpr Real from() const noexcept { return from_; }
     [[nodiscard]] constexpr Real to() const noexcept { return to_; }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "sector";
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"centre", "radius", "from", "to"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(centre_, radius_, from_, to_);
+    }
+
     friend constexpr bool operator==(const sector& a, const sector& b) noexcept {
         return a.centre_ == b.centre_ && a.radius_ == b.radius_ && a.from_ == b.from_ &&
                a.to_ == b.to_;

@@ -81,6 +81,16 @@ public:
     /// The other end.
     [[nodiscard]] constexpr point_type b() const noexcept { return piece_.to; }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "segment";
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"a", "b"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(piece_.from, piece_.to);
+    }
+
     friend constexpr bool operator==(const segment&, const segment&) = default;
 
 private:

@@ -37,6 +37,9 @@ public:
                     Inner inner, Outer outer)
         : base(centre.value, static_cast<Real>(inner), static_cast<Real>(outer)) {}
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "shell";
+
     friend constexpr bool operator==(const shell&, const shell&) = default;
 
 private:

@@ -67,6 +67,28 @@ public:
         return shape_.corners();
     }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "simplex";
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"corners", "open"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(shape_.corners(), shape_.is_open());
+    }
+    /// From those arguments.
+    static constexpr simplex from_arguments(const corners_type& corners, bool open) {
+        if (!open) {
+            return simplex(corners);
+        }
+        const simplex unit;
+        if (corners != unit.corners()) {
+            detail::refuse("simplex",
+                           "the corners of an open one must be those of the unit simplex");
+        }
+        return unit;
+    }
+
     friend constexpr bool operator==(const simplex&, const simplex&) = default;
 
 private:
@@ -104,6 +126,16 @@ public:
 
     [[nodiscard]] constexpr const std::array<point_type, 4>& corners() const noexcept {
         return shape_.corners();
+    }
+
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "tetrahedron";
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"a", "b", "c", "d"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(corners()[0], corners()[1], corners()[2], corners()[3]);
     }
 
     friend constexpr bool operator==(const tetrahedron&, const tetrahedron&) = default;

@@ -75,6 +75,16 @@ public:
     [[nodiscard]] constexpr point_type centre() const noexcept { return surface_.centre(); }
     [[nodiscard]] constexpr Real radius() const noexcept { return surface_.radius(); }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "sphere";
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"centre", "radius"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(surface_.centre(), surface_.radius());
+    }
+
     friend constexpr bool operator==(const sphere&, const sphere&) = default;
 
 private:

@@ -118,6 +118,16 @@ public:
     [[nodiscard]] constexpr Real major() const noexcept { return major_; }
     [[nodiscard]] constexpr Real minor() const noexcept { return minor_; }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "torus";
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"centre", "major", "minor"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(centre_, major_, minor_);
+    }
+
     friend constexpr bool operator==(const torus&, const torus&) = default;
 
 private:

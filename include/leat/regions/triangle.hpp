@@ -81,6 +81,16 @@ public:
         return corners_;
     }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "triangle";
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"a", "b", "c"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(corners_[0], corners_[1], corners_[2]);
+    }
+
     friend constexpr bool operator==(const triangle&, const triangle&) = default;
 
 private:

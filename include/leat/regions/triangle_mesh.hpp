@@ -122,6 +122,16 @@ public:
     /// The triangles' indices.
     [[nodiscard]] const std::vector<indices>& triangles() const noexcept { return triangles_; }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "triangle_mesh";
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"vertices", "triangles"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(vertices_, triangles_);
+    }
+
     friend bool operator==(const triangle_mesh& a, const triangle_mesh& b) noexcept {
         return a.vertices_ == b.vertices_ && a.triangles_ == b.triangles_;
     }

@@ -41,10 +41,17 @@ class uniform;
 template <detail::portable_real Real = double, ends Ends = ends::open>
 struct uniform_parameters {
     using distribution_type = uniform<Real, Ends>;
+    static constexpr const char* law_name = "uniform";
 
     Real a = 0; ///< one end
     Real b = 1; ///< the other, above a
 
+    /// Calls visit(name, field) for each of them.
+    template <class Self, class Visit>
+    static constexpr void each(Self& self, Visit visit) {
+        visit("a", self.a);
+        visit("b", self.b);
+    }
     friend constexpr bool operator==(const uniform_parameters&,
                                      const uniform_parameters&) = default;
 };

@@ -153,10 +153,17 @@ class uniform_integer;
 template <detail::number_integer Int = int>
 struct uniform_integer_parameters {
     using distribution_type = uniform_integer<Int>;
+    static constexpr const char* law_name = "uniform_integer";
 
     Int lo = 0;                               ///< the least value
     Int hi = std::numeric_limits<Int>::max(); ///< the greatest, not below lo
 
+    /// Calls visit(name, field) for each of them.
+    template <class Self, class Visit>
+    static constexpr void each(Self& self, Visit visit) {
+        visit("lo", self.lo);
+        visit("hi", self.hi);
+    }
     friend constexpr bool operator==(const uniform_integer_parameters&,
                                      const uniform_integer_parameters&) = default;
 };

@@ -36,6 +36,14 @@ public:
         return a;
     }
 
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"base_centre", "axis", "radius", "height"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(base_, frame_.template given<Real>(), radius_, height_);
+    }
+
     friend constexpr bool operator==(const axial_solid&, const axial_solid&) = default;
 
 protected:

@@ -27,7 +27,8 @@ public:
     /// Of an axis of any length but 0, the constructor parameter of the region `name`.
     template <portable_real Real>
     constexpr axis_frame(const char* name, const char* parameter,
-                         const std::array<Real, 3>& direction) {
+                         const std::array<Real, 3>& direction)
+        : given_{double{direction[0]}, double{direction[1]}, double{direction[2]}} {
         require_point(name, parameter, direction);
         int largest = exponent_of(0.0);
         for (const Real x : direction) {
@@ -85,7 +86,17 @@ public:
         return square_root((a * a + b * b).value);
     }
 
-    friend constexpr bool operator==(const axis_frame&, const axis_frame&) = default;
+    /// The axis as the constructor got it, which a saved region shows.
+    template <portable_real Real>
+    [[nodiscard]] constexpr std::array<Real, 3> given() const noexcept {
+        return {static_cast<Real>(given_[0]), static_cast<Real>(given_[1]),
+                static_cast<Real>(given_[2])};
+    }
+
+    /// Whether the axes are the same, whatever length they were given in.
+    friend constexpr bool operator==(const axis_frame& a, const axis_frame& b) noexcept {
+        return a.third_ == b.third_;
+    }
 
 private:
     using real = strict<double>;
@@ -101,6 +112,7 @@ private:
         second_ = {b.value, (real(sign) + y * y * a).value, (-y).value};
     }
 
+    vector given_;
     vector first_{};
     vector second_{};
     vector third_{};

@@ -50,6 +50,14 @@ public:
     /// The angle from the x axis to the first semi-axis, counter-clockwise, in radians.
     [[nodiscard]] constexpr Real rotation() const noexcept { return rotation_; }
 
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"centre", "semi_x", "semi_y", "rotation"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(centre_, semi_[0], semi_[1], rotation_);
+    }
+
     friend constexpr bool operator==(const elliptic_region&, const elliptic_region&) = default;
 
 protected:

@@ -140,6 +140,8 @@ public:
 
     [[nodiscard]] constexpr const region_bounds<Real, N>& box() const noexcept { return box_; }
     [[nodiscard]] constexpr const corners_type& corners() const noexcept { return corners_; }
+    /// Whether its faces are left out: those of the unit simplex.
+    [[nodiscard]] constexpr bool is_open() const noexcept { return open_; }
 
     friend constexpr bool operator==(const simplex_shape& a, const simplex_shape& b) noexcept {
         return a.corners_ == b.corners_ && a.open_ == b.open_;

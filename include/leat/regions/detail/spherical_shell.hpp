@@ -67,6 +67,14 @@ public:
     [[nodiscard]] constexpr Real inner() const noexcept { return inner_; }
     [[nodiscard]] constexpr Real outer() const noexcept { return outer_; }
 
+    /// What its constructor takes, by name.
+    static constexpr const char* argument_names[] = {"centre", "inner", "outer"};
+    /// Calls use with what the constructor took.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(centre_, inner_, outer_);
+    }
+
     friend constexpr bool operator==(const spherical_shell&, const spherical_shell&) = default;
 
 protected:
