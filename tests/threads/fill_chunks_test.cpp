@@ -58,12 +58,13 @@ TEST(FillChunks, DrawEachChunkFromTheStreamThatTheSpecificationNames) {
 }
 
 TEST(FillChunks, AreApartFromTheUsersStreams) {
-    const leat::stream_address chunk = leat::detail::chunk_address(study.branch("array"), 3);
+    const leat::stream_address chunk =
+        leat::detail::chunk_stream(study.branch("array"), 3).address();
     EXPECT_NE(chunk.key, study.stream("array", 3).address().key);
     EXPECT_NE(chunk.key, study.stream("array").offspring(3).address().key);
     // A trailing integer of the branch is no index: chunks of two branches do not meet.
-    EXPECT_NE(leat::detail::chunk_address(study.branch("array", 1), 3).key,
-              leat::detail::chunk_address(study.branch("array", 2), 3).key);
+    EXPECT_NE(leat::detail::chunk_stream(study.branch("array", 1), 3).address().key,
+              leat::detail::chunk_stream(study.branch("array", 2), 3).address().key);
 }
 
 TEST(FillChunks, DoNotDependOnOrderOrRange) {

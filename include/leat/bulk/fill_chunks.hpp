@@ -49,7 +49,7 @@ constexpr void fill_chunk(Array&& array, const Sampler& sampler, const source& f
     if (elements.size() > chunk_length) {
         detail::refuse("fill_chunk", "length", elements.size(), "must be at most 4096");
     }
-    stream words(detail::chunk_address(from, chunk));
+    stream words = detail::chunk_stream(from, chunk);
     leat::fill(elements, sampler, words);
 }
 

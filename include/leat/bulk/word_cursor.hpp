@@ -34,12 +34,12 @@ concept bulk_words = whole_words<G> && requires(G& g, std::span<std::uint64_t> o
     g.draw_into(out);
 };
 
-/// One that knows its place, can go to another, and may have a limit.
+/// One that knows its place, can take words back, and may have a limit.
 template <class G>
 concept seekable_words = bulk_words<G> && requires(G& g, std::uint64_t n) {
     n = g.position();
     n = g.limit();
-    g.seek(n);
+    g.give_back(n);
 };
 
 /// See above. It meets random_words itself: samplers draw from it as from the engine.
@@ -112,7 +112,7 @@ private:
             return;
         }
         if constexpr (seekable_words<G>) {
-            engine_.seek(engine_.position() - (end_ - next_));
+            engine_.give_back(end_ - next_);
         } else {
             engine_ = before_;
             engine_.draw_into(std::span(words_).first(next_));

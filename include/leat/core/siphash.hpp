@@ -12,6 +12,7 @@
 
 #include "leat/core/wide_multiply.hpp" // word_pair
 
+#include <array>
 #include <bit>
 #include <cstdint>
 
@@ -44,6 +45,14 @@ public:
         s.rounds(4);
         return {low, s.v0_ ^ s.v1_ ^ s.v2_ ^ s.v3_};
     }
+
+    /// The running state: the authors' v0 to v3, and the words absorbed.
+    [[nodiscard]] constexpr std::array<std::uint64_t, 5> state() const noexcept {
+        return {v0_, v1_, v2_, v3_, words_};
+    }
+    /// Goes on from a state.
+    constexpr explicit siphash(const std::array<std::uint64_t, 5>& state) noexcept
+        : v0_(state[0]), v1_(state[1]), v2_(state[2]), v3_(state[3]), words_(state[4]) {}
 
     friend constexpr bool operator==(const siphash&, const siphash&) = default;
 

@@ -7,6 +7,7 @@
 #ifndef LEAT_CORE_TEXT_HPP
 #define LEAT_CORE_TEXT_HPP
 
+#include <array>
 #include <bit>
 #include <cstdint>
 #include <iosfwd>
@@ -101,6 +102,28 @@ bool read_unsigned(std::basic_istream<Char, Traits>& is, std::uint64_t max, std:
     }
     is.setstate(std::basic_istream<Char, Traits>::failbit);
     return false;
+}
+
+/// Writes whole numbers, one space between two.
+template <class Char, class Traits, std::size_t N>
+void write_words(std::basic_ostream<Char, Traits>& os, const std::array<std::uint64_t, N>& words) {
+    for (std::size_t i = 0; i < N; ++i) {
+        if (i != 0) {
+            write_char(os, ' ');
+        }
+        write_unsigned(os, words[i]);
+    }
+}
+
+/// Reads whole numbers below 2^64; on anything else sets failbit and returns false.
+template <class Char, class Traits, std::size_t N>
+bool read_words(std::basic_istream<Char, Traits>& is, std::array<std::uint64_t, N>& words) {
+    for (std::uint64_t& word : words) {
+        if (!read_unsigned(is, ~std::uint64_t{0}, word)) {
+            return false;
+        }
+    }
+    return true;
 }
 
 /// Writes an integer of either sign in decimal.

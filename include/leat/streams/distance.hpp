@@ -8,6 +8,7 @@
 
 #include "leat/core/errors.hpp"
 #include "leat/core/montgomery.hpp" // powers of two modulo a period
+#include "leat/core/text.hpp"
 #include "leat/core/wide_integer.hpp"
 
 #include <array>
@@ -95,6 +96,35 @@ inline message& print(message& m, wide_integer x) {
         x = quotient;
     } while (x != wide_integer{});
     return m.text(first);
+}
+
+/// Writes a wide integer to a stream, in decimal.
+template <class Char, class Traits>
+void write_wide(std::basic_ostream<Char, Traits>& os, const wide_integer& x) {
+    message m;
+    for (const char* c = print(m, x).c_str(); *c != '\0'; ++c) {
+        write_char(os, *c);
+    }
+}
+
+/// Reads decimal digits, at most 308 of them: such a number is below 2^1024, and above all periods.
+/// On anything else sets failbit and returns false.
+template <class Char, class Traits>
+bool read_wide(std::basic_istream<Char, Traits>& is, wide_integer& x) {
+    if (is.good()) {
+        skip_space(is);
+        char digits[309];
+        std::size_t count = 0;
+        for (int digit = 0; count < 309 && (digit = read_digit(is, 10)) >= 0; ++count) {
+            digits[count] = static_cast<char>('0' + digit);
+        }
+        if (count != 0 && count < 309) {
+            x = wide_integer{std::string_view(digits, count)};
+            return true;
+        }
+    }
+    is.setstate(std::basic_istream<Char, Traits>::failbit);
+    return false;
 }
 
 /// The number of steps as given: a wide integer, or a power of two that may be too large for one.

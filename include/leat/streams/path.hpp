@@ -33,6 +33,7 @@
 #include "leat/core/errors.hpp"
 #include "leat/core/siphash.hpp"
 
+#include <array>
 #include <concepts>
 #include <cstddef> // nullptr_t
 #include <cstdint>
@@ -133,6 +134,28 @@ public:
         const word_pair result = hash.finish();
         return {result.low, result.high + (has_held_ ? held_ : 0)};
     }
+
+    /// What a saved path consists of: the state of the hash, the integer held back, and 1 where
+    /// there is one plus 2 where it is negative.
+    using state_type = std::array<std::uint64_t, 7>;
+    static constexpr std::uint64_t largest_form = 3;
+
+    [[nodiscard]] constexpr state_type state() const noexcept {
+        const auto h = hash_.state();
+        return {h[0],
+                h[1],
+                h[2],
+                h[3],
+                h[4],
+                held_,
+                (has_held_ ? std::uint64_t{1} : 0) + (held_is_negative_ ? std::uint64_t{2} : 0)};
+    }
+    /// Goes on from a state, whose last word must be at most `largest_form`.
+    constexpr explicit path_hash(const state_type& s) noexcept
+        : hash_(std::array<std::uint64_t, 5>{s[0], s[1], s[2], s[3], s[4]}),
+          held_(s[5]),
+          has_held_((s[6] & 1u) != 0),
+          held_is_negative_((s[6] & 2u) != 0) {}
 
     friend constexpr bool operator==(const path_hash&, const path_hash&) = default;
 

@@ -25,6 +25,7 @@
 #define LEAT_STREAMS_SPLIT_HPP
 
 #include "leat/core/errors.hpp"
+#include "leat/core/text.hpp"
 #include "leat/core/wide_integer.hpp"
 #include "leat/streams/distance.hpp"
 #include "leat/streams/jump.hpp"
@@ -97,6 +98,49 @@ public:
 
     friend constexpr bool operator==(const limited& a, const limited& b) {
         return a.engine_ == b.engine_ && a.remaining() == b.remaining();
+    }
+
+    /// The length, in draws, that it was made with.
+    [[nodiscard]] constexpr const wide_integer& length() const noexcept { return length_; }
+    /// An engine that stands `position` draws into a piece of `length`, so that length - position
+    /// are left. A position past the length is refused.
+    [[nodiscard]] static constexpr limited at(const Engine& engine, const wide_integer& length,
+                                              const wide_integer& position) {
+        if (position > length) {
+            detail::refuse("limited", "position must be at most the length");
+        }
+        limited made(engine, length);
+        made.loaded_ = made.left_ = 0;
+        made.before_ = position;
+        made.load();
+        return made;
+    }
+
+    /// Writes length, position and the engine.
+    template <class Char, class Traits>
+    friend std::basic_ostream<Char, Traits>& operator<<(std::basic_ostream<Char, Traits>& os,
+                                                        const limited& x) {
+        detail::write_wide(os, x.length_);
+        detail::write_char(os, ' ');
+        detail::write_wide(os, x.position());
+        detail::write_char(os, ' ');
+        return os << x.engine_;
+    }
+    /// Reads what << wrote; garbage sets failbit and leaves `x` as it was.
+    template <class Char, class Traits>
+    friend std::basic_istream<Char, Traits>& operator>>(std::basic_istream<Char, Traits>& is,
+                                                        limited& x) {
+        wide_integer length;
+        wide_integer position;
+        Engine engine = x.engine_;
+        if (detail::read_wide(is, length) && detail::read_wide(is, position) && is >> engine) {
+            if (position <= length) {
+                x = at(engine, length, position);
+            } else {
+                is.setstate(std::basic_istream<Char, Traits>::failbit);
+            }
+        }
+        return is;
     }
 
 private:

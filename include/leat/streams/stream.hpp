@@ -15,6 +15,10 @@
 // Use one stream per entity, purpose and replication. Do not use it for keys, tokens or gambling:
 // who knows a few words and the method can look for the rest.
 //
+// As text (<< and >>) a stream is its key, the upper half of its counter, its position and its
+// limit. A moved-from stream has no text: << sets failbit. What >> reads takes the place of the
+// stream that was there.
+//
 // Errors: `stream_exhausted`, naming the address, at the end or at a limit; `error` when a
 // moved-from stream is drawn from.
 
@@ -23,8 +27,10 @@
 
 #include "leat/core/errors.hpp"
 #include "leat/core/sizes.hpp"
+#include "leat/core/text.hpp"
 #include "leat/streams/address.hpp"
 #include "leat/streams/path.hpp"
+#include "leat/streams/recorder.hpp"
 #include "leat/streams/refill.hpp"
 
 #include <array>
@@ -60,6 +66,30 @@ constexpr stream_place offspring_place(const stream_address& parent, const path_
     return path.place(path_kind::offspring);
 }
 
+/// Writes key, upper half, position and limit; a moved-from stream sets failbit.
+template <class Char, class Traits, class Stream>
+std::basic_ostream<Char, Traits>& write_stream(std::basic_ostream<Char, Traits>& os,
+                                               const Stream& s, stream_mode mode) {
+    if (mode == stream_mode::moved_from) {
+        os.setstate(std::basic_ostream<Char, Traits>::failbit);
+    } else {
+        const stream_address a = s.address();
+        write_words(os, std::array<std::uint64_t, 4>{a.key, a.upper, a.position, s.limit()});
+    }
+    return os;
+}
+
+/// Reads what write_stream wrote; garbage sets failbit and leaves the stream as it was.
+template <class Char, class Traits, class Stream>
+std::basic_istream<Char, Traits>& read_stream(std::basic_istream<Char, Traits>& is, Stream& s) {
+    std::array<std::uint64_t, 4> words{};
+    if (read_words(is, words)) {
+        s = Stream(stream_address{words[0], words[1], words[2]});
+        s.limit(words[3]);
+    }
+    return is;
+}
+
 } // namespace detail
 
 class thin_stream;
@@ -71,13 +101,15 @@ public:
 
     /// The stream at an address, standing at its position.
     constexpr explicit stream(const stream_address& a) noexcept : key_(a.key), upper_(a.upper) {
-        seek(a.position);
+        go_to(a.position);
     }
 
     stream(const stream&) = delete; // a copy would repeat draws: pass by reference, or replica()
     stream& operator=(const stream&) = delete;
 
+    /// Takes over: the other may not be drawn from any more.
     constexpr stream(stream&& other) noexcept { take(other); }
+    /// Takes over: the other may not be drawn from any more.
     constexpr stream& operator=(stream&& other) noexcept {
         if (this != &other) {
             take(other);
@@ -103,13 +135,16 @@ public:
         constexpr std::size_t buffer = detail::stream_buffer_words;
         std::size_t i = 0;
         while (i < out.size()) {
-            if (cursor_ == end_ && position() % buffer == 0 && !is_moved_from_) {
+            if (cursor_ == end_ && position() % buffer == 0 && mode_ != mode::moved_from) {
                 // Whole buffers go straight to their place.
                 const std::uint64_t left = limit_ > position() ? limit_ - position() : 0;
                 const std::size_t whole = detail::smaller(out.size() - i, left) / buffer;
                 detail::refill({key_, upper_}, position() / 2, out.data() + i, whole);
-                seek(position() + whole * buffer);
+                go_to(position() + whole * buffer);
                 i += whole * buffer;
+                if (mode_ == mode::recorded) [[unlikely]] {
+                    record_->drawn(whole * buffer, position());
+                }
                 if (i == out.size()) {
                     break;
                 }
@@ -126,11 +161,8 @@ public:
 
     /// Goes to word n, in O(1). Going past a limit is allowed; drawing there throws.
     constexpr void seek(std::uint64_t n) noexcept {
-        const std::uint64_t base = n - n % detail::stream_buffer_words;
-        filled_ = filled_ && base == base_;
-        base_ = base;
-        cursor_ = static_cast<std::uint32_t>(n - base);
-        set_end();
+        go_to(n);
+        tell();
     }
 
     /// Skips n words, in O(1). Past the end of the stream it throws and moves nothing.
@@ -141,19 +173,30 @@ public:
         seek(position() + n);
     }
 
+    /// Takes the last n words drawn back, as if they had not been: for what reads ahead.
+    constexpr void give_back(std::uint64_t n) noexcept {
+        go_to(position() - n);
+        if (mode_ == mode::recorded) [[unlikely]] {
+            record_->drawn(0 - n, position());
+        }
+    }
+
     /// Lets the stream yield words up to position n and no further: word n (from 0) throws.
     constexpr void limit(std::uint64_t n) noexcept {
         limit_ = n;
         set_end();
+        tell();
     }
     [[nodiscard]] constexpr std::uint64_t limit() const noexcept { return limit_; }
 
     /// A second stream that yields the same words from here on, with the same limit.
-    [[nodiscard]] constexpr stream replica() const noexcept {
+    [[nodiscard]] constexpr stream replica() const {
         stream copy(address());
-        copy.limit(limit_);
-        copy.is_moved_from_ = is_moved_from_;
-        copy.set_end();
+        copy.limit_ = limit_;
+        copy.mode_ = mode_;
+        if (mode_ == mode::recorded) [[unlikely]] {
+            copy.record_ = record_->replica(address(), limit_);
+        }
         return copy;
     }
 
@@ -166,11 +209,49 @@ public:
     /// position, and of i (an integer or a text), whenever it is asked for.
     template <class Part>
     [[nodiscard]] constexpr stream offspring(const Part& i) const {
-        const auto place = detail::offspring_place(address(), detail::as_path_part(i));
-        return stream(stream_address{place.key, place.upper, 0});
+        const detail::path_part part = detail::as_path_part(i);
+        const auto place = detail::offspring_place(address(), part);
+        const stream_address start{place.key, place.upper, 0};
+        if (mode_ == mode::recorded) [[unlikely]] {
+            return stream(start, *record_->offspring(part, start));
+        }
+        return stream(start);
+    }
+
+    template <class Char, class Traits>
+    friend std::basic_ostream<Char, Traits>& operator<<(std::basic_ostream<Char, Traits>& os,
+                                                        const stream& s) {
+        return detail::write_stream(os, s, s.mode_);
+    }
+    template <class Char, class Traits>
+    friend std::basic_istream<Char, Traits>& operator>>(std::basic_istream<Char, Traits>& is,
+                                                        stream& s) {
+        return detail::read_stream(is, s);
     }
 
 private:
+    using mode = detail::stream_mode;
+    friend class source;
+
+    /// The stream at an address, which tells a ledger what it does.
+    stream(const stream_address& a, detail::stream_record& record) noexcept : stream(a) {
+        mode_ = mode::recorded;
+        record_ = &record;
+    }
+
+    constexpr void go_to(std::uint64_t n) noexcept {
+        const std::uint64_t base = n - n % detail::stream_buffer_words;
+        filled_ = filled_ && base == base_;
+        base_ = base;
+        cursor_ = static_cast<std::uint32_t>(n - base);
+        set_end();
+    }
+
+    constexpr void tell() const noexcept {
+        if (mode_ == mode::recorded) [[unlikely]] {
+            record_->stands(position(), limit_);
+        }
+    }
     constexpr void take(stream& other) noexcept {
         key_ = other.key_;
         upper_ = other.upper_;
@@ -178,7 +259,10 @@ private:
         limit_ = other.limit_;
         cursor_ = other.cursor_;
         filled_ = other.filled_;
-        is_moved_from_ = std::exchange(other.is_moved_from_, true);
+        mode_ = std::exchange(other.mode_, mode::moved_from);
+        if (mode_ == mode::recorded) [[unlikely]] {
+            record_ = other.record_;
+        }
         if (filled_) {
             words_ = other.words_;
         }
@@ -187,9 +271,10 @@ private:
     }
 
     // Words up to end_ may be drawn from the buffer; end_ == cursor_ sends the next draw to refill.
+    // A recorded stream goes there for every word, so that a draw need not ask whether it is one.
     constexpr void set_end() noexcept {
         end_ = cursor_;
-        if (filled_ && !is_moved_from_ && limit_ > position()) {
+        if (filled_ && mode_ == mode::plain && limit_ > position()) {
             const std::uint64_t allowed = limit_ - base_;
             end_ = allowed < detail::stream_buffer_words
                        ? static_cast<std::uint32_t>(allowed)
@@ -199,16 +284,22 @@ private:
 
     // Makes the buffer hold the word at position(), or throws.
     [[gnu::noinline]] constexpr void refill() {
-        if (is_moved_from_) {
+        if (mode_ == mode::moved_from) {
             detail::moved_from("stream");
         }
         if (position() >= limit_) {
             detail::exhausted("stream", address(), limit_);
         }
-        seek(position()); // from the end of one buffer to the start of the next
-        detail::refill({key_, upper_}, base_ / 2, words_.data());
-        filled_ = true;
+        go_to(position()); // from the end of one buffer to the start of the next
+        if (!filled_) {
+            detail::refill({key_, upper_}, base_ / 2, words_.data());
+            filled_ = true;
+        }
         set_end();
+        if (mode_ == mode::recorded) [[unlikely]] {
+            end_ = cursor_ + 1;
+            record_->drawn(1, position() + 1);
+        }
     }
 
     std::uint64_t key_ = 0;
@@ -218,7 +309,8 @@ private:
     std::uint32_t cursor_ = 0;
     std::uint32_t end_ = 0;
     bool filled_ = false; // words_ holds the words at base_
-    bool is_moved_from_ = false;
+    mode mode_ = mode::plain;
+    detail::stream_record* record_;                                // unset unless recorded
     std::array<std::uint64_t, detail::stream_buffer_words> words_; // unset until filled_
 };
 
@@ -227,13 +319,16 @@ class thin_stream {
 public:
     using result_type = std::uint64_t;
 
+    /// The stream at an address, standing at its position.
     constexpr explicit thin_stream(const stream_address& a) noexcept
         : key_(a.key), upper_(a.upper), position_(a.position) {}
 
     thin_stream(const thin_stream&) = delete; // a copy would repeat draws
     thin_stream& operator=(const thin_stream&) = delete;
 
+    /// Takes over: the other may not be drawn from any more.
     constexpr thin_stream(thin_stream&& other) noexcept { take(other); }
+    /// Takes over: the other may not be drawn from any more.
     constexpr thin_stream& operator=(thin_stream&& other) noexcept {
         if (this != &other) {
             take(other);
@@ -247,8 +342,8 @@ public:
 
     /// The next word; see stream.
     constexpr result_type operator()() {
-        if (is_moved_from_) [[unlikely]] {
-            detail::moved_from("thin_stream");
+        if (mode_ != mode::plain) [[unlikely]] {
+            return draw_unless_plain();
         }
         if (position_ >= limit_) [[unlikely]] {
             detail::exhausted("thin_stream", address(), limit_);
@@ -268,11 +363,14 @@ public:
 
     /// Writes the words that drawing one by one would give; see stream, at whose speed it does so.
     constexpr void draw_into(std::span<std::uint64_t> out) {
-        const std::uint64_t left = is_moved_from_ || position_ >= limit_ ? 0 : limit_ - position_;
-        const std::size_t allowed = detail::smaller(out.size(), left);
+        const bool none = mode_ == mode::moved_from || position_ >= limit_;
+        const std::size_t allowed = detail::smaller(out.size(), none ? 0 : limit_ - position_);
         stream buffered(address());
         buffered.draw_into(out.first(allowed));
-        seek(buffered.position());
+        go_to(buffered.position());
+        if (mode_ == mode::recorded) [[unlikely]] {
+            record_->drawn(allowed, position_);
+        }
         if (allowed < out.size()) {
             (*this)(); // says what is wrong
         }
@@ -280,8 +378,8 @@ public:
 
     [[nodiscard]] constexpr std::uint64_t position() const noexcept { return position_; }
     constexpr void seek(std::uint64_t n) noexcept {
-        position_ = n;
-        has_second_ = false;
+        go_to(n);
+        tell();
     }
     constexpr void discard(std::uint64_t n) {
         if (n > detail::stream_capacity - position_) {
@@ -289,41 +387,112 @@ public:
         }
         seek(position_ + n);
     }
-    constexpr void limit(std::uint64_t n) noexcept { limit_ = n; }
+    constexpr void give_back(std::uint64_t n) noexcept {
+        go_to(position_ - n);
+        if (mode_ == mode::recorded) [[unlikely]] {
+            record_->drawn(0 - n, position_);
+        }
+    }
+    constexpr void limit(std::uint64_t n) noexcept {
+        limit_ = n;
+        tell();
+    }
     [[nodiscard]] constexpr std::uint64_t limit() const noexcept { return limit_; }
-    [[nodiscard]] constexpr thin_stream replica() const noexcept {
+    [[nodiscard]] constexpr thin_stream replica() const {
         thin_stream copy(address());
         copy.limit_ = limit_;
-        copy.is_moved_from_ = is_moved_from_;
+        copy.mode_ = mode_;
+        if (mode_ == mode::recorded) [[unlikely]] {
+            copy.record_ = record_->replica(address(), limit_);
+        }
         return copy;
     }
+    /// Which draw comes next.
     [[nodiscard]] constexpr stream_address address() const noexcept {
         return {key_, upper_, position_};
     }
+    /// The stream of what is born during a run; see stream.
     template <class Part>
     [[nodiscard]] constexpr thin_stream offspring(const Part& i) const {
-        const auto place = detail::offspring_place(address(), detail::as_path_part(i));
-        return thin_stream(stream_address{place.key, place.upper, 0});
+        const detail::path_part part = detail::as_path_part(i);
+        const auto place = detail::offspring_place(address(), part);
+        const stream_address start{place.key, place.upper, 0};
+        if (mode_ == mode::recorded) [[unlikely]] {
+            return thin_stream(start, *record_->offspring(part, start));
+        }
+        return thin_stream(start);
+    }
+
+    template <class Char, class Traits>
+    friend std::basic_ostream<Char, Traits>& operator<<(std::basic_ostream<Char, Traits>& os,
+                                                        const thin_stream& s) {
+        return detail::write_stream(os, s, s.mode_);
+    }
+    template <class Char, class Traits>
+    friend std::basic_istream<Char, Traits>& operator>>(std::basic_istream<Char, Traits>& is,
+                                                        thin_stream& s) {
+        return detail::read_stream(is, s);
     }
 
 private:
+    using mode = detail::stream_mode;
+    friend class source;
+
+    thin_stream(const stream_address& a, detail::stream_record& record) noexcept : thin_stream(a) {
+        mode_ = mode::recorded;
+        record_ = &record;
+    }
+
+    constexpr void go_to(std::uint64_t n) noexcept {
+        position_ = n;
+        has_second_ = false;
+    }
+
+    constexpr void tell() const noexcept {
+        if (mode_ == mode::recorded) [[unlikely]] {
+            record_->stands(position_, limit_);
+        }
+    }
+
+    // A recorded stream, whose words are counted, or a moved-from one.
+    [[gnu::noinline]] result_type draw_unless_plain() {
+        if (mode_ == mode::moved_from) {
+            detail::moved_from("thin_stream");
+        }
+        if (position_ >= limit_) {
+            detail::exhausted("thin_stream", address(), limit_);
+        }
+        const auto pair = detail::stream_block({key_, upper_}, position_ / 2);
+        const result_type word = pair[position_ % 2];
+        ++position_;
+        record_->drawn(1, position_);
+        return word;
+    }
     constexpr void take(thin_stream& other) noexcept {
         key_ = other.key_;
         upper_ = other.upper_;
         position_ = other.position_;
         limit_ = other.limit_;
-        second_ = other.second_;
         has_second_ = other.has_second_;
-        is_moved_from_ = std::exchange(other.is_moved_from_, true);
+        mode_ = std::exchange(other.mode_, mode::moved_from);
+        if (mode_ == mode::recorded) [[unlikely]] {
+            record_ = other.record_;
+            other.second_ = 0;
+        } else {
+            second_ = other.second_;
+        }
     }
 
     std::uint64_t key_ = 0;
     std::uint64_t upper_ = 0;
     std::uint64_t position_ = 0;
     std::uint64_t limit_ = detail::stream_capacity;
-    std::uint64_t second_ = 0; // the second word of the last block, where has_second_
+    union {
+        std::uint64_t second_ = 0;      // the second word of the last block, where has_second_
+        detail::stream_record* record_; // of a recorded stream, which never has_second_
+    };
     bool has_second_ = false;
-    bool is_moved_from_ = false;
+    mode mode_ = mode::plain;
 };
 
 static_assert(sizeof(stream) <= 320 && sizeof(thin_stream) <= 48);
