@@ -55,6 +55,9 @@ class additive_feedback {
 public:
     using result_type = std::uint32_t;
     using state_type = std::array<std::uint32_t, long_lag>; ///< oldest first
+    /// The name under which it is saved.
+    static constexpr const char* engine_name =
+        long_lag == 31 ? "additive_feedback31" : "additive_feedback63";
     static constexpr std::uint64_t default_seed = 1;
     static constexpr int state_bits = 32 * static_cast<int>(long_lag);
 

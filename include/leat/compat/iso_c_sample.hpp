@@ -36,6 +36,8 @@ class iso_c_sample {
 public:
     using result_type = std::uint32_t;
     using state_type = std::uint32_t;
+    /// The name under which it is saved.
+    static constexpr const char* engine_name = "iso_c_sample";
     static constexpr std::uint64_t default_seed = 1;
     static constexpr int state_bits = 31;
 

@@ -47,6 +47,8 @@ class posix48 {
 public:
     using result_type = std::uint32_t;
     using state_type = std::array<std::uint16_t, 3>; ///< least significant first, as in seed48()
+    /// The name under which it is saved.
+    static constexpr const char* engine_name = "posix48";
     static constexpr std::uint64_t default_seed = 0x1234ABCD;
     static constexpr int state_bits = 48;
 

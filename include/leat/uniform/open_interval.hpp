@@ -42,6 +42,11 @@ template <detail::portable_real Real = double, ends Ends = ends::open>
 struct uniform_parameters {
     using distribution_type = uniform<Real, Ends>;
     static constexpr const char* law_name = "uniform";
+    /// What tells the kinds apart where they are saved.
+    static constexpr const char* variant_name = Ends == ends::open          ? nullptr
+                                                : Ends == ends::closed_open ? "closed_open"
+                                                : Ends == ends::open_closed ? "open_closed"
+                                                                            : "closed";
 
     Real a = 0; ///< one end
     Real b = 1; ///< the other, above a
