@@ -1,0 +1,138 @@
+// The incomplete beta function: the shares of a beta law below and above a point, and the point
+// that has a given share on one side; the same bits everywhere.
+//
+// Domain: shapes a, b >= 1/2, up to 2^53; 0 < x < 1, given with y = 1 - x, each with all its
+// digits. Method: the continued fraction on the side of the mean where it converges (M. Abramowitz
+// and I. A. Stegun, Handbook of Mathematical Functions, 26.5.8), evaluated forward (W. J. Lentz,
+// Appl. Opt. 15, 1976; I. J. Thompson and A. R. Barnett, J. Comput. Phys. 64, 1986), times the
+// density in deviance form. It takes some sqrt(a + b) steps of 20 ns near the mean, few elsewhere.
+// Error, measured against Boost.Math in tests/estimate: 1e-13 relative for a + b up to 1e6, of the
+// smaller share. Points: by Newton's steps on logarithms, to about the same error.
+
+#ifndef LEAT_ESTIMATE_DETAIL_INCOMPLETE_BETA_HPP
+#define LEAT_ESTIMATE_DETAIL_INCOMPLETE_BETA_HPP
+
+#include "leat/core/barrier.hpp"
+#include "leat/core/error_free.hpp" // magnitude
+#include "leat/core/exponential.hpp"
+#include "leat/core/logarithm.hpp"
+#include "leat/core/normal_quantile.hpp" // where to begin
+#include "leat/core/scaled.hpp"
+#include "leat/core/square_root.hpp"
+#include "leat/distributions/detail/beta_density.hpp"
+#include "leat/distributions/detail/evaluate.hpp" // inverse, or_zero
+
+#include <cstdint>
+
+namespace leat::detail {
+
+/// The factor of the continued fraction of I_x(a, b), for x up to about the mean.
+constexpr double beta_fraction(double a, double b, double x) noexcept {
+    using real = strict<double>;
+    constexpr double nearly_none = 0x1p-300; // in place of a denominator of 0
+    constexpr double settled = 0x1p-52;
+    const auto safe_inverse = [](real d) {
+        return real(1.0) / (magnitude(d.value) < nearly_none ? real(nearly_none) : d);
+    };
+    const real sum = real(a) + b;
+    real above = 1.0;
+    real below = safe_inverse(real(1.0) - sum * x / (real(a) + 1.0));
+    real fraction = below;
+    for (double m = 1; m < 1e9; m += 1) { // settled long before
+        const real at = real(a) + 2 * m;
+        const real even = real(m) * (real(b) - m) * x / ((at - 1.0) * at);
+        below = safe_inverse(even * below + 1.0);
+        above = even / above + 1.0;
+        fraction = fraction * (above * below);
+        const real odd = -((real(a) + m) * (sum + m) * x / (at * (at + 1.0)));
+        below = safe_inverse(odd * below + 1.0);
+        above = odd / above + 1.0;
+        const real change = above * below;
+        fraction = fraction * change;
+        if (magnitude((change - 1.0).value) <= settled) {
+            break;
+        }
+    }
+    return fraction.value;
+}
+
+/// What lies on either side of a point, and the slope at it.
+struct beta_shares {
+    scaled below;  // I_x(a, b)
+    scaled above;  // 1 - I_x(a, b)
+    scaled kernel; // x^a y^b / B(a, b): the slope of `below` over ln(x / y)
+};
+
+/// 1 - p, for a share p that is at most about 2/3.
+constexpr scaled rest_of(scaled p) noexcept { return split(held(1.0 - or_zero(p))); }
+
+/// The shares of a beta law at x.
+constexpr beta_shares beta_shares_at(double a, double b, double x, double y) noexcept {
+    using real = strict<double>;
+    const scaled kernel = beta_kernel(a, b, x, y);
+    if (real(x) * (real(a) + b + 2.0) < real(a) + 1.0) {
+        const scaled below = kernel * split(beta_fraction(a, b, x)) * inverse(split(a));
+        return {below, rest_of(below), kernel};
+    }
+    const scaled above = kernel * split(beta_fraction(b, a, y)) * inverse(split(b));
+    return {rest_of(above), above, kernel};
+}
+
+/// ln x.
+constexpr double log_of(scaled x) noexcept {
+    constexpr double log_two = 0x1.62e42fefa39efp-1;
+    return (strict<double>(static_cast<double>(x.exponent)) * log_two + natural_log(x.factor))
+        .value;
+}
+
+/// A step of Newton's method for ln x that brings `share` to `wanted`: the factor of x. `slope` is
+/// that of the share over ln x.
+constexpr double newton_log_step(scaled share, double wanted, scaled slope) noexcept {
+    using real = strict<double>;
+    const real missing = real(natural_log(wanted)) - log_of(share);
+    return (missing * (share * inverse(slope)).value()).value;
+}
+
+/// A point of a beta law, with what is left to 1.
+struct beta_place {
+    double x;
+    double y;
+};
+
+/// The x that has the share `wanted` <= 1/2 of the beta law below it or, if `upper`, above it.
+///
+/// Both shares are log-concave in ln x, so that after its first step the method comes nearer from
+/// one side only, and doubles its digits once it is near.
+constexpr beta_place beta_point(double a, double b, double wanted, bool upper) noexcept {
+    using real = strict<double>;
+    if (a > b) { // look for the smaller of x and y
+        const beta_place mirrored = beta_point(b, a, wanted, !upper);
+        return {mirrored.y, mirrored.x};
+    }
+    // Begin where ln x would be if it were normal: its variance is about b / (a (a + b)).
+    const real sum = real(a) + b;
+    const double deviation = square_root((real(b) / sum / a).value);
+    const real z = upper ? -normal_quantile(wanted) : normal_quantile(wanted);
+    double x = (real(natural_exp((z * deviation).value)) * a / sum).value;
+    x = x < 0.75 ? x : 0.75;
+    for (int i = 0; i < 200; ++i) { // about five
+        const real y = real(1.0) - x;
+        const beta_shares shares = beta_shares_at(a, b, x, y.value);
+        const scaled rise = shares.kernel * inverse(split(y.value)); // d below / d ln x
+        const double step = upper ? -newton_log_step(shares.above, wanted, rise)
+                                  : newton_log_step(shares.below, wanted, rise);
+        // No step of more than a few standard deviations: far out the shares leave the range.
+        const double longest = held(4.0 * deviation);
+        const double taken = step > longest ? longest : step < -longest ? -longest : step;
+        const double next = (real(x) * natural_exp(taken)).value;
+        x = next < 1 ? next : ((real(x) + 1.0) * 0.5).value;
+        if (magnitude(step) < 0x1p-27) { // what is left is of the order of its square
+            break;
+        }
+    }
+    return {x, (real(1.0) - x).value};
+}
+
+} // namespace leat::detail
+
+#endif
