@@ -20,6 +20,7 @@ need libboost-dev has_header boost/math/distributions/students_t.hpp
 need libgsl-dev has_header gsl/gsl_cdf.h
 need libmpfr-dev has_header mpfr.h
 need libgmp-dev has_header gmp.h
+need doxygen has_command doxygen
 install_missing
 
 configure_and_build "$root/build/test" all -D LEAT_BUILD_TESTS=ON -D LEAT_BUILD_EXAMPLES=ON \
