@@ -100,9 +100,12 @@ public:
     using result_type = std::uint64_t;
 
     /// The stream at an address, standing at its position.
-    constexpr explicit stream(const stream_address& a) noexcept : key_(a.key), upper_(a.upper) {
-        go_to(a.position);
-    }
+    constexpr explicit stream(const stream_address& a) noexcept
+        : key_(a.key),
+          upper_(a.upper),
+          base_(a.position - a.position % detail::stream_buffer_words),
+          cursor_(static_cast<std::uint32_t>(a.position % detail::stream_buffer_words)),
+          end_(cursor_) {}
 
     stream(const stream&) = delete; // a copy would repeat draws: pass by reference, or replica()
     stream& operator=(const stream&) = delete;
@@ -260,9 +263,7 @@ private:
         cursor_ = other.cursor_;
         filled_ = other.filled_;
         mode_ = std::exchange(other.mode_, mode::moved_from);
-        if (mode_ == mode::recorded) [[unlikely]] {
-            record_ = other.record_;
-        }
+        record_ = other.record_;
         if (filled_) {
             words_ = other.words_;
         }
@@ -310,7 +311,7 @@ private:
     std::uint32_t end_ = 0;
     bool filled_ = false; // words_ holds the words at base_
     mode mode_ = mode::plain;
-    detail::stream_record* record_;                                // unset unless recorded
+    detail::stream_record* record_ = nullptr;                      // where recorded
     std::array<std::uint64_t, detail::stream_buffer_words> words_; // unset until filled_
 };
 
