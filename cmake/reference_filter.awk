@@ -7,7 +7,7 @@
 #   - namespace detail is hidden, but for the bases of public classes that are listed below: users
 #     see their members;
 #   - members that mean the same in every class are documented here once, where a class says no more;
-#   - `protected:` reads `private:`, since leat's classes are not for deriving from.
+#   - in these bases `protected:` reads `private:`.
 
 BEGIN {
     shown = "axial_solid direction_law elliptic_region law location_scale region_base " \
