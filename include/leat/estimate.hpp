@@ -7,12 +7,15 @@
 #ifndef LEAT_ESTIMATE_HPP
 #define LEAT_ESTIMATE_HPP
 
+#include "leat/estimate/batch_means.hpp"
 #include "leat/estimate/exact_sum.hpp"
 #include "leat/estimate/in_order.hpp"
 #include "leat/estimate/interval.hpp"
 #include "leat/estimate/mean_interval.hpp"
 #include "leat/estimate/merge_tree.hpp"
 #include "leat/estimate/paired_differences.hpp"
+#include "leat/estimate/proportion_interval.hpp"
+#include "leat/estimate/quantile_interval.hpp"
 #include "leat/estimate/running_moments.hpp"
 #include "leat/estimate/stopping.hpp"
 

@@ -26,34 +26,31 @@
 
 namespace leat::detail {
 
-/// The factor of the continued fraction of I_x(a, b), for x up to about the mean.
-constexpr double beta_fraction(double a, double b, double x) noexcept {
+/// I_x(a, b) B(a, b) / (x^a y^b), for x up to the mean: `excess` = a y - b x >= 0.
+constexpr double beta_fraction(double a, double b, double x, double y, double excess) noexcept {
     using real = strict<double>;
-    constexpr double nearly_none = 0x1p-300; // in place of a denominator of 0
-    constexpr double settled = 0x1p-52;
-    const auto safe_inverse = [](real d) {
-        return real(1.0) / (magnitude(d.value) < nearly_none ? real(nearly_none) : d);
-    };
-    const real sum = real(a) + b;
-    real above = 1.0;
-    real below = safe_inverse(real(1.0) - sum * x / (real(a) + 1.0));
-    real fraction = below;
-    for (double m = 1; m < 1e9; m += 1) { // settled long before
-        const real at = real(a) + 2 * m;
-        const real even = real(m) * (real(b) - m) * x / ((at - 1.0) * at);
-        below = safe_inverse(even * below + 1.0);
-        above = even / above + 1.0;
-        fraction = fraction * (above * below);
-        const real odd = -((real(a) + m) * (sum + m) * x / (at * (at + 1.0)));
-        below = safe_inverse(odd * below + 1.0);
-        above = odd / above + 1.0;
+    // 1 / (beta_1 + alpha_2 / (beta_2 + alpha_3 / (beta_3 + ...))), by the ratios of successive
+    // numerators and (inverted) denominators.
+    const real first = real(excess) + 1.0;
+    real value = real(a) * first / (real(a) + 1.0);
+    real above = value;
+    real below = 0.0;
+    for (double n = 1; n < 1e9; n += 1) { // settled long before
+        const real at = real(a) + (2 * n - 1);
+        const real before = real(a) + (n - 1);
+        const real weight = real(n) * (real(b) - n) * x;
+        const real alpha = before / at * ((before + b) / at) * (weight * x);
+        const real beta =
+            weight / at + n + (real(a) + n) / (at + 2.0) * ((real(y) + 1.0) * n + first);
+        below = real(1.0) / (alpha * below + beta);
+        above = alpha / above + beta;
         const real change = above * below;
-        fraction = fraction * change;
-        if (magnitude((change - 1.0).value) <= settled) {
+        value = value * change;
+        if (magnitude((change - 1.0).value) <= 0x1p-52) {
             break;
         }
     }
-    return fraction.value;
+    return (real(1.0) / value).value;
 }
 
 /// What lies on either side of a point, and the slope at it.
@@ -70,11 +67,14 @@ constexpr scaled rest_of(scaled p) noexcept { return split(held(1.0 - or_zero(p)
 constexpr beta_shares beta_shares_at(double a, double b, double x, double y) noexcept {
     using real = strict<double>;
     const scaled kernel = beta_kernel(a, b, x, y);
-    if (real(x) * (real(a) + b + 2.0) < real(a) + 1.0) {
-        const scaled below = kernel * split(beta_fraction(a, b, x)) * inverse(split(a));
+    const two_part of_a = two_product(a, y);
+    const two_part of_b = two_product(b, x);
+    const real excess = (real(of_a.high) - of_b.high) + (real(of_a.low) - of_b.low);
+    if (excess >= 0.0) {
+        const scaled below = kernel * split(beta_fraction(a, b, x, y, excess.value));
         return {below, rest_of(below), kernel};
     }
-    const scaled above = kernel * split(beta_fraction(b, a, y)) * inverse(split(b));
+    const scaled above = kernel * split(beta_fraction(b, a, y, x, (-excess).value));
     return {rest_of(above), above, kernel};
 }
 
