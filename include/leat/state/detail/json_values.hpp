@@ -9,6 +9,7 @@
 #define LEAT_STATE_DETAIL_JSON_VALUES_HPP
 
 #include "leat/core/errors.hpp"
+#include "leat/core/wide_integer.hpp"
 #include "leat/state/detail/json_checksum.hpp" // json_value
 #include "leat/state/refused.hpp"
 
@@ -151,6 +152,38 @@ public:
                    ? "must be a finite number, or the text \"infinity\" or \"-infinity\""
                    : "must be a number that a float holds, or the text \"infinity\" or "
                      "\"-infinity\"");
+    }
+    /// A whole number of any size up to 2^1024.
+    [[nodiscard]] wide_integer wide() const {
+        const std::string_view digits = value_->is_string() ? text() : std::string_view{};
+        bool sound = !digits.empty() && digits.size() <= 308 &&
+                     (digits.size() == 1 || digits.front() != '0');
+        for (const char c : digits) {
+            sound = sound && c >= '0' && c <= '9';
+        }
+        if (!sound) {
+            refuse("must be the decimal digits, as a text, of a whole number below 10^308");
+        }
+        return wide_integer{digits};
+    }
+    /// The place of something that is not saved.
+    void null() const {
+        if (!value_->is_null()) {
+            refuse("must be null");
+        }
+    }
+    /// A T by its own from_json.
+    template <class T>
+    [[nodiscard]] T other() const {
+#if defined(__cpp_exceptions)
+        try {
+            return value_->template get<T>();
+        } catch (const typename Json::exception&) {
+            refuse("must be what its own from_json reads");
+        }
+#else
+        return value_->template get<T>();
+#endif
     }
     /// The entries of a list.
     [[nodiscard]] std::vector<json_field> list() const {

@@ -143,7 +143,12 @@ std::string type_name() {
     name_arguments arguments;
     if constexpr (named_law<T>) {
         using parameters = typename T::param_type;
-        arguments.add_number<typename T::result_type>();
+        using result = typename T::result_type;
+        if constexpr (requires { typename result::value_type; }) { // of a law of several dimensions
+            arguments.add_number<typename result::value_type>();
+        } else {
+            arguments.add_number<result>();
+        }
         if constexpr (requires { parameters::variant_name; }) {
             if (parameters::variant_name != nullptr) {
                 arguments.add(parameters::variant_name);
