@@ -21,16 +21,19 @@ struct lease_input {
     double centre_x_km, centre_y_km; ///< east and north of the chart's origin
     double semi_x_km, semi_y_km;     ///< half-axes, before the turn
     double angle_degrees;            ///< turned anticlockwise
+    friend bool operator==(const lease_input&, const lease_input&) = default;
 };
 
 struct port_input {
     double x_km, y_km;
+    friend bool operator==(const port_input&, const port_input&) = default;
 };
 
 struct turbines_input {
     int count;
     double rated_mw;
     double min_spacing_m; ///< no two turbines stand nearer than this
+    friend bool operator==(const turbines_input&, const turbines_input&) = default;
 };
 
 /// One kind of component, of which every turbine has one.
@@ -41,6 +44,7 @@ struct component_input {
     double life_scale_days;
     double repair_mean_hours; ///< lognormal, of work in workable weather
     double repair_sd_hours;
+    friend bool operator==(const component_input&, const component_input&) = default;
 };
 
 /// Workable weather comes in windows, with waits between them.
@@ -49,11 +53,13 @@ struct weather_input {
     double wait_mean_hours;                  ///< exponential
     double capacity_workable; ///< what a running turbine yields in a window, share of rated power
     double capacity_waiting;  ///< and between windows, when it blows
+    friend bool operator==(const weather_input&, const weather_input&) = default;
 };
 
 struct design_input {
     std::string name;
     int vessels;
+    friend bool operator==(const design_input&, const design_input&) = default;
 };
 
 struct input {

@@ -1,9 +1,9 @@
 #include "input_file.hpp"
 
-#include <fstream>
 #include <set>
 #include <utility>
 
+#include "files.hpp"
 #include "refusal.hpp"
 
 namespace skerry {
@@ -106,20 +106,12 @@ input read_document(const json& document) {
 
 } // namespace
 
+loaded_input parse_input(const json& document) { return {read_document(document), document}; }
+
 loaded_input load_input(const std::string& file) {
-    std::ifstream stream(file, std::ios::binary);
-    const bool opened = stream.is_open();
-    std::string text;
-    for (char block[4096]; stream.read(block, sizeof block) || stream.gcount() > 0;) {
-        text.append(block, static_cast<std::size_t>(stream.gcount()));
-    }
-    if (!opened || stream.bad()) { // bad: a folder, on some systems
-        throw refusal(file, "cannot be read");
-    }
+    const std::string text = read_file(file);
     try {
-        json document = parse_json(text);
-        input values = read_document(document);
-        return {std::move(values), std::move(document)};
+        return parse_input(parse_json(text));
     } catch (const refusal& e) {
         throw refusal(file, e.what());
     }

@@ -20,6 +20,9 @@ struct loaded_input {
     json document;
 };
 
+/// The input that a document holds. Throws refusal, which names the key.
+loaded_input parse_input(const json& document);
+
 /// Reads the file. Throws refusal, which names the file and the key.
 loaded_input load_input(const std::string& file);
 

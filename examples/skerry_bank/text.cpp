@@ -34,6 +34,11 @@ std::string shortest(double x) {
     return std::string(buffer, std::to_chars(buffer, buffer + sizeof buffer, x).ptr);
 }
 
+std::string hexadecimal(std::uint64_t x) {
+    char buffer[16];
+    return std::string(buffer, std::to_chars(buffer, buffer + sizeof buffer, x, 16).ptr);
+}
+
 double rounded(double x, int digits) {
     const double power = std::pow(10.0, digits);
     return std::round(x * power) / power;

@@ -4,6 +4,7 @@
 #define SKERRY_BANK_TEXT_HPP
 
 #include <cstddef>
+#include <cstdint>
 #include <optional>
 #include <string>
 #include <string_view>
@@ -15,6 +16,9 @@ std::string fixed(double x, int digits);
 
 /// x as short as it can be said and still read back.
 std::string shortest(double x);
+
+/// x in base 16.
+std::string hexadecimal(std::uint64_t x);
 
 /// x rounded to so many digits after the point: what goes into results.json where a last bit
 /// could depend on the compiler (sums that may be contracted, the t quantile).

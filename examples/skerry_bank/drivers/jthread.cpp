@@ -1,0 +1,31 @@
+// The driver for std::jthread: a counter that every thread takes its next replication from.
+
+#include <algorithm>
+#include <atomic>
+#include <system_error>
+#include <thread>
+
+#include "drivers.hpp"
+
+namespace skerry {
+
+void run_on_jthread(const replication_function& run, collector& rows, int threads) {
+    const std::vector<int> tasks = rows.missing();
+    std::atomic<std::size_t> next{0};
+    const auto work = [&] {
+        for (std::size_t i = next++; i < tasks.size(); i = next++) {
+            attempt(run, rows, tasks[i]);
+        }
+    };
+    std::vector<std::jthread> workers; // joined where the function ends
+    try {
+        for (std::size_t w = 0; w < std::min(static_cast<std::size_t>(threads), tasks.size());
+             ++w) {
+            workers.emplace_back(work);
+        }
+    } catch (const std::system_error& e) {
+        rows.stop("cannot start " + std::to_string(threads) + " threads: " + e.what());
+    }
+}
+
+} // namespace skerry
