@@ -116,6 +116,21 @@ public:
         return made;
     }
 
+    /// The name under which it is saved.
+    static constexpr const char* class_name = "limited";
+    /// What `at` takes, by name.
+    static constexpr const char* argument_names[] = {"engine", "length", "position"};
+    /// Calls use with those arguments.
+    template <class Use>
+    constexpr decltype(auto) arguments(Use use) const {
+        return use(engine_, length_, position());
+    }
+    /// From those arguments.
+    static constexpr limited from_arguments(const Engine& engine, const wide_integer& length,
+                                            const wide_integer& position) {
+        return at(engine, length, position);
+    }
+
     /// Writes length, position and the engine.
     template <class Char, class Traits>
     friend std::basic_ostream<Char, Traits>& operator<<(std::basic_ostream<Char, Traits>& os,

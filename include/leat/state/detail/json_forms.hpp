@@ -187,7 +187,7 @@ struct saved_form<T> {
                 Json list = Json::array();
                 (list.push_back(to_value<Json>(arguments)), ...);
                 content[T::list_name] = std::move(list);
-            } else if constexpr (sizeof...(arguments) != 0) {
+            } else if constexpr (requires { T::argument_names; }) {
                 std::size_t i = 0;
                 ((content[T::argument_names[i++]] = to_value<Json>(arguments)), ...);
             }
@@ -213,12 +213,12 @@ private:
         const std::vector<json_field<Json>> values = [&] {
             if constexpr (requires { T::list_name; }) {
                 return fields.take(T::list_name).list(sizeof...(Types));
-            } else if constexpr (sizeof...(Types) == 0) {
-                return std::vector<json_field<Json>>{};
             } else {
                 std::vector<json_field<Json>> taken;
-                for (const char* const name : T::argument_names) {
-                    taken.push_back(fields.take(name));
+                if constexpr (requires { T::argument_names; }) {
+                    for (const char* const name : T::argument_names) {
+                        taken.push_back(fields.take(name));
+                    }
                 }
                 return taken;
             }

@@ -15,6 +15,9 @@
 
 #include <concepts>
 #include <cstddef>
+#include <cstdint>
+#include <sstream> // a moved-from stream has no text
+#include <utility> // move
 
 namespace leat::detail {
 
@@ -29,13 +32,15 @@ requires std::same_as<T, stream> || std::same_as<T, thin_stream>
 struct saved_form<T> {
     static constexpr const char* name = std::same_as<T, stream> ? "stream" : "thin_stream";
 
-    /// Throws what drawing would where the stream was moved from: that must not come to life again.
+    /// Throws where the stream was moved from: that must not come to life again.
     template <json_value Json>
     static Json write(const T& x) {
-        T probe = x.replica();
-        probe.limit(stream_capacity);
-        probe.seek(0);
-        probe();
+        std::ostringstream text;
+        if ((text << x).fail()) {
+            message m;
+            m.text("leat::json: ").text(name);
+            raise<error>(m.text(": saved after it was moved from; save what it was moved to"));
+        }
         Json content = Json::object();
         content["address"] = to_string(x.address());
         content["limit"] = word_to_json<Json>(x.limit());
