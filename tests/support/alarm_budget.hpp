@@ -144,6 +144,11 @@ inline constexpr declared_checks alarm_budget[] = {
     {"LawsAtLength.Poisson", 18},
     {"LawsAtLength.Binomial", 13},
     {"NormalBeyondEight.IsComplete", 2},
+    {"AlarmRate.OfMeansAndDistributionsIsWhatWasAskedFor", 3},
+    {"AlarmRate.OfSkewMeansIsWithinTheStatedFactor", 1},
+    {"AlarmRate.OfBoundedMeansIsNeverHigher", 2},
+    {"AlarmRate.OfRepeatedLooksIsSpentOnce", 2},
+    {"PlantedFaultsOfUsers.AreFound", 4},
     {"AlarmBudget.APValueBelowTheLevelFails", 1},
 };
 

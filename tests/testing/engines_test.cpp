@@ -19,7 +19,7 @@ static_assert(std::uniform_random_bit_generator<leat::testing::scripted>);
 static_assert(std::uniform_random_bit_generator<leat::testing::all_ones32>);
 static_assert(leat::random_words<leat::scripted> && leat::random_words<leat::scripted32> &&
               leat::random_words<leat::constant> && leat::random_words<leat::all_zeros> &&
-              leat::random_words<leat::all_ones>);
+              leat::random_words<leat::all_ones> && leat::random_words<leat::alternating>);
 static_assert(leat::all_ones{}() == 0xFFFFFFFFFFFFFFFFu && leat::all_ones32{}() == 0xFFFFFFFFu);
 static_assert(leat::all_zeros{}() == 0 && leat::constant{7}() == 7);
 static_assert(std::same_as<leat::scripted, leat::testing::scripted>);
@@ -71,6 +71,18 @@ TEST(Constant, NeverChanges) {
     for (int i = 0; i < 1000; ++i) {
         ASSERT_EQ(g(), 42u);
     }
+}
+
+TEST(Alternating, ReturnsTwoWordsInTurn) {
+    leat::alternating g;
+    EXPECT_EQ(g(), 0u);
+    EXPECT_EQ(g(), ~std::uint64_t{0});
+    EXPECT_EQ(g(), 0u);
+    leat::alternating32 h{5, 9};
+    EXPECT_EQ(h(), 5u);
+    EXPECT_EQ(h(), 9u);
+    EXPECT_EQ(h(), 5u);
+    EXPECT_EQ(h, (leat::alternating32{9, 5}));
 }
 
 } // namespace

@@ -3,6 +3,7 @@
 //   leat::scripted g{0, 1, ~0ull};   // these words, then an error
 //   leat::constant g{42};            // this word for ever
 //   leat::all_zeros g;  leat::all_ones g;
+//   leat::alternating g;             // all zeros, all ones, all zeros, ...; or any two words
 //
 // `scripted` pins what code does with known draws, and how many it takes: one word too many throws
 // stream_exhausted, and the message says how many were asked for. The others are the worst an
@@ -101,6 +102,27 @@ public:
     friend constexpr bool operator==(const only_ones&, const only_ones&) = default;
 };
 
+/// Returns two words in turn: no bit set and every bit set, or the two given.
+template <std::unsigned_integral Word>
+class two_in_turn : public full_range<Word> {
+public:
+    constexpr two_in_turn() noexcept : two_in_turn(0, std::numeric_limits<Word>::max()) {}
+    constexpr two_in_turn(Word first, Word second) noexcept : next_(first), other_(second) {}
+
+    constexpr Word operator()() noexcept {
+        const Word word = next_;
+        next_ = other_;
+        other_ = word;
+        return word;
+    }
+
+    friend constexpr bool operator==(const two_in_turn&, const two_in_turn&) = default;
+
+private:
+    Word next_;
+    Word other_;
+};
+
 using scripted = script<std::uint64_t>;
 using scripted32 = script<std::uint32_t>;
 using constant = repeated_word<std::uint64_t>;
@@ -109,6 +131,8 @@ using all_zeros = only_zeros<std::uint64_t>;
 using all_zeros32 = only_zeros<std::uint32_t>;
 using all_ones = only_ones<std::uint64_t>;
 using all_ones32 = only_ones<std::uint32_t>;
+using alternating = two_in_turn<std::uint64_t>;
+using alternating32 = two_in_turn<std::uint32_t>;
 
 } // namespace testing
 
@@ -116,6 +140,8 @@ using testing::all_ones;
 using testing::all_ones32;
 using testing::all_zeros;
 using testing::all_zeros32;
+using testing::alternating;
+using testing::alternating32;
 using testing::constant;
 using testing::constant32;
 using testing::scripted;

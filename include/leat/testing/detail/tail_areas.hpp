@@ -1,0 +1,174 @@
+// Tail areas of the laws that tests of fit refer to: Student's t, chi-squared, and the
+// Kolmogorov-Smirnov distance. The same bits everywhere, so that a test decides alike everywhere.
+//
+//   student_t_beyond      P(|T| >= |t|), by the continued fraction of the incomplete beta function
+//   chi_squared_tails     P(X <= x) and P(X >= x), by the series and the continued fraction of the
+//                         incomplete gamma function
+//   kolmogorov_beyond     min(1, 2 P(D+ >= d)) of n samples; never below P(D >= d), where one of
+//   the
+//                         one-sided distances D+ and D- must reach d. As both seldom do, it is too
+//                         large by a factor of at most 1.02 where p is below 1/2, and of 1 +
+//                         (p/2)^3 where p is below 1/4. P(D+ >= d) itself is exact.
+//
+// Error, measured against GSL and Boost.Math in tests/testing: 2e-11 relative up to 10^6 degrees of
+// freedom, 1e-8 at 10^8, down to areas of 1e-300; below the smallest normal number the result is 0.
+// Work: about the root of the degrees of freedom; for the distance 0.2 microseconds a sample.
+// Sources: Abramowitz and Stegun, 6.5.29, 6.5.31, 26.5.8; W. J. Lentz, Applied Optics 15, 1976 (how
+// to evaluate a continued fraction); Z. W. Birnbaum and F. H. Tingey, Ann. Math. Stat. 22, 1951,
+// eq. (3.0), its terms written as binomial masses.
+
+#ifndef LEAT_TESTING_DETAIL_TAIL_AREAS_HPP
+#define LEAT_TESTING_DETAIL_TAIL_AREAS_HPP
+
+#include "leat/core/barrier.hpp"
+#include "leat/core/error_free.hpp" // magnitude
+#include "leat/core/exponential.hpp"
+#include "leat/distributions/chi_squared.hpp"
+#include "leat/distributions/detail/discrete_deviance.hpp"
+#include "leat/distributions/detail/law.hpp" // finite
+#include "leat/distributions/student_t.hpp"
+
+#include <cstdint>
+
+namespace leat::testing::detail {
+
+using real = leat::detail::strict<double>;
+
+/// What no longer changes a sum or a product.
+inline constexpr double negligible = 0x1p-53;
+/// A bound for loops that end long before: after about the root of the degrees of freedom.
+inline constexpr int most_terms = 100'000'000;
+
+/// A continued fraction 1 / (b1 + a2 / (b2 + a3 / (b3 + ...))), from the front (Lentz).
+class continued_fraction {
+public:
+    constexpr explicit continued_fraction(double b1) noexcept
+        : below_(real(1.0) / b1), value_(below_) {}
+
+    /// Takes the next a and b; false when the value no longer changes.
+    constexpr bool append(real a, real b) noexcept {
+        below_ = real(1.0) / off_zero(b + a * below_);
+        const real above = off_zero(b + a * above_inverse_);
+        above_inverse_ = real(1.0) / above;
+        const real factor = above * below_;
+        value_ = value_ * factor;
+        return leat::detail::magnitude((factor - 1.0).value) > 2 * negligible;
+    }
+    [[nodiscard]] constexpr double value() const noexcept { return value_.value; }
+
+private:
+    static constexpr real off_zero(real x) noexcept {
+        return leat::detail::magnitude(x.value) < 0x1p-500 ? real(0x1p-500) : x;
+    }
+
+    real below_; // ratios of successive denominators and numerators
+    real above_inverse_ = 0.0;
+    real value_;
+};
+
+/// The areas on both sides of a point.
+struct tail_areas {
+    double below;
+    double above;
+};
+
+/// Of the chi-squared law with `degrees` > 0, at x >= 0.
+constexpr tail_areas chi_squared_tails(double x, double degrees) {
+    if (!(x > 0)) {
+        return {0, 1};
+    }
+    if (!leat::detail::finite(x)) {
+        return {1, 0};
+    }
+    const real a = real(degrees) * 0.5;
+    const real z = real(x) * 0.5;
+    // z^a e^-z / Gamma(a)
+    const real front = real(chi_squared<double>{degrees}.density(x)) * x;
+    if (z < a + 1.0) {
+        real term = real(1.0) / a;
+        real sum = term;
+        for (int n = 1; n < most_terms && term.value > sum.value * negligible; ++n) {
+            term = term * z / (a + static_cast<double>(n));
+            sum = sum + term;
+        }
+        const real below = front * sum;
+        return {below.value, (real(1.0) - below).value};
+    }
+    const real first = z - a + 1.0;
+    continued_fraction fraction(first.value);
+    for (int n = 1; n < most_terms; ++n) {
+        const real k = static_cast<double>(n);
+        if (!fraction.append(k * (a - k), first + k * 2.0)) {
+            break;
+        }
+    }
+    const real above = front * fraction.value();
+    return {(real(1.0) - above).value, above.value};
+}
+
+/// The continued fraction of the incomplete beta function, x^a (1 - x)^b / (a B(a, b)) times which
+/// is the area below x.
+constexpr double beta_fraction(real a, real b, real x) noexcept {
+    continued_fraction fraction(1.0);
+    for (int n = 1; n < most_terms; ++n) {
+        const real m = static_cast<double>(n / 2);
+        const real place = a + m * 2.0;
+        const real coefficient = n % 2 != 0 ? -((a + m) * (a + b + m) * x) / (place * (place + 1.0))
+                                            : m * (b - m) * x / ((place - 1.0) * place);
+        if (!fraction.append(coefficient, 1.0)) {
+            break;
+        }
+    }
+    return fraction.value();
+}
+
+/// P(|T| >= |t|) for Student's t with `degrees` > 0.
+constexpr double student_t_beyond(double t, double degrees) {
+    const real size = leat::detail::magnitude(t);
+    if (size.value == 0) {
+        return 1;
+    }
+    if (size.value > 0x1p400) { // the square would leave the range
+        return 0;
+    }
+    // The area is that below x = k / (k + t^2) of a beta law of k/2 and 1/2.
+    const real a = real(degrees) * 0.5;
+    const real square = size * size;
+    const real x = real(degrees) / (real(degrees) + square);
+    const real rest = square / (real(degrees) + square);
+    const real front = size * student_t<double>{degrees}.density(size.value);
+    if (x < (a + 1.0) / (a + 2.5)) {
+        return (front / a * beta_fraction(a, 0.5, x)).value;
+    }
+    return (real(1.0) - front * 2.0 * beta_fraction(0.5, a, rest)).value;
+}
+
+/// A bound for P(D >= reach / n), D the distance of n samples from their distribution function; see
+/// above.
+constexpr double kolmogorov_beyond(double reach, std::uint64_t n) {
+    namespace d = leat::detail;
+    const auto size = static_cast<double>(n);
+    if (reach <= 0.5) { // nothing is nearer
+        return 1;
+    }
+    const double total = d::log_poisson_mass_at_mean(size);
+    real sum = 0.0;
+    for (std::uint64_t j = 0; j < n; ++j) {
+        const auto below = static_cast<double>(j);
+        const double above = size - below;
+        const real left = real(above) - reach;
+        if (!(left.value > 0)) {
+            break;
+        }
+        // j of n samples below a point whose distribution function is (j + reach) / n.
+        const real mean = real(below) + reach;
+        const real log_mass = real(d::log_poisson_mass(below, mean.value, -reach)) +
+                              d::log_poisson_mass(above, left.value, reach) - total;
+        sum = sum + real(d::natural_exp(log_mass.value)) * reach / mean;
+    }
+    return sum.value < 0.5 ? (sum * 2.0).value : 1.0;
+}
+
+} // namespace leat::testing::detail
+
+#endif
