@@ -55,8 +55,14 @@ struct stopping_rule {
         if (m.count() < at_least || m.variance() == 0) {
             return false;
         }
+        const double half = wanted(m);
+        const double error = m.standard_error();
+        // t is above z, and z much cheaper: most looks end here.
+        if (detail::held(detail::normal_point(level) * error) > half) {
+            return false;
+        }
         const double t = detail::student_point(static_cast<double>(m.count() - 1), level);
-        return detail::held(t * m.standard_error()) <= wanted(m);
+        return detail::held(t * error) <= half;
     }
 
     /// About how many values will be needed in all, judged by the moments so far and the normal
