@@ -149,6 +149,7 @@ inline constexpr declared_checks alarm_budget[] = {
     {"AlarmRate.OfBoundedMeansIsNeverHigher", 2},
     {"AlarmRate.OfRepeatedLooksIsSpentOnce", 2},
     {"PlantedFaultsOfUsers.AreFound", 4},
+    {"CompatRand.IsUnbiasedWhereTheRemainderIsNot", 2},
     {"AlarmBudget.APValueBelowTheLevelFails", 1},
 };
 
