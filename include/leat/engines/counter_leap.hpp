@@ -7,6 +7,7 @@
 #define LEAT_ENGINES_COUNTER_LEAP_HPP
 
 #include "leat/core/errors.hpp"
+#include "leat/core/text.hpp"
 
 #include <cstdint>
 
@@ -35,6 +36,24 @@ public:
     }
 
     friend constexpr bool operator==(const counter_leap&, const counter_leap&) = default;
+
+    /// Writes how many draws are skipped after each, and the engine.
+    template <class Char, class Traits>
+    friend std::basic_ostream<Char, Traits>& operator<<(std::basic_ostream<Char, Traits>& os,
+                                                        const counter_leap& e) {
+        detail::write_unsigned(os, e.skip_);
+        detail::write_char(os, ' ');
+        return os << e.engine_;
+    }
+    template <class Char, class Traits>
+    friend std::basic_istream<Char, Traits>& operator>>(std::basic_istream<Char, Traits>& is,
+                                                        counter_leap& e) {
+        counter_leap read = e;
+        if (detail::read_unsigned(is, ~std::uint64_t{0}, read.skip_) && is >> read.engine_) {
+            e = read;
+        }
+        return is;
+    }
 
 private:
     Engine engine_; // its next draw is ours

@@ -66,6 +66,27 @@ public:
 
     friend constexpr bool operator==(const lehmer_leap&, const lehmer_leap&) = default;
 
+    /// Writes the next draw and the multiplier.
+    template <class Char, class Traits>
+    friend std::basic_ostream<Char, Traits>& operator<<(std::basic_ostream<Char, Traits>& os,
+                                                        const lehmer_leap& e) {
+        detail::write_words(os, std::array<std::uint64_t, 2>{e.next_, e.multiplier_});
+        return os;
+    }
+    template <class Char, class Traits>
+    friend std::basic_istream<Char, Traits>& operator>>(std::basic_istream<Char, Traits>& is,
+                                                        lehmer_leap& e) {
+        std::array<std::uint64_t, 2> words{};
+        if (detail::read_words(is, words)) {
+            if (words[0] == 0 || words[0] >= modulus || words[1] == 0 || words[1] >= modulus) {
+                is.setstate(std::basic_istream<Char, Traits>::failbit);
+            } else {
+                e = {static_cast<UInt>(words[0]), static_cast<UInt>(words[1])};
+            }
+        }
+        return is;
+    }
+
 private:
     UInt next_;
     UInt multiplier_;

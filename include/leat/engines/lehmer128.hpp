@@ -51,6 +51,29 @@ public:
 
     friend constexpr bool operator==(const lehmer128_leap&, const lehmer128_leap&) = default;
 
+    /// Writes the state and the multiplier, each low word first.
+    template <class Char, class Traits>
+    friend std::basic_ostream<Char, Traits>& operator<<(std::basic_ostream<Char, Traits>& os,
+                                                        const lehmer128_leap& e) {
+        detail::write_words(os,
+                            std::array<std::uint64_t, 4>{e.next_.low, e.next_.high,
+                                                         e.multiplier_.low, e.multiplier_.high});
+        return os;
+    }
+    template <class Char, class Traits>
+    friend std::basic_istream<Char, Traits>& operator>>(std::basic_istream<Char, Traits>& is,
+                                                        lehmer128_leap& e) {
+        std::array<std::uint64_t, 4> words{};
+        if (detail::read_words(is, words)) {
+            if ((words[0] & words[2] & 1u) == 0) { // both are odd
+                is.setstate(std::basic_istream<Char, Traits>::failbit);
+            } else {
+                e = {{words[0], words[1]}, {words[2], words[3]}};
+            }
+        }
+        return is;
+    }
+
 private:
     detail::word_pair next_;
     detail::word_pair multiplier_;

@@ -69,8 +69,8 @@ constexpr stream_place offspring_place(const stream_address& parent, const path_
 /// Writes key, upper half, position and limit; a moved-from stream sets failbit.
 template <class Char, class Traits, class Stream>
 std::basic_ostream<Char, Traits>& write_stream(std::basic_ostream<Char, Traits>& os,
-                                               const Stream& s, stream_mode mode) {
-    if (mode == stream_mode::moved_from) {
+                                               const Stream& s) {
+    if (s.was_moved_from()) {
         os.setstate(std::basic_ostream<Char, Traits>::failbit);
     } else {
         const stream_address a = s.address();
@@ -203,6 +203,11 @@ public:
         return copy;
     }
 
+    /// Whether it was moved from and yields nothing any more, until another is moved to it.
+    [[nodiscard]] constexpr bool was_moved_from() const noexcept {
+        return mode_ == mode::moved_from;
+    }
+
     /// Which draw comes next; `stream{address}` starts there.
     [[nodiscard]] constexpr stream_address address() const noexcept {
         return {key_, upper_, position()};
@@ -224,7 +229,7 @@ public:
     template <class Char, class Traits>
     friend std::basic_ostream<Char, Traits>& operator<<(std::basic_ostream<Char, Traits>& os,
                                                         const stream& s) {
-        return detail::write_stream(os, s, s.mode_);
+        return detail::write_stream(os, s);
     }
     template <class Char, class Traits>
     friend std::basic_istream<Char, Traits>& operator>>(std::basic_istream<Char, Traits>& is,
@@ -409,6 +414,9 @@ public:
         return copy;
     }
     /// Which draw comes next.
+    [[nodiscard]] constexpr bool was_moved_from() const noexcept {
+        return mode_ == mode::moved_from;
+    }
     [[nodiscard]] constexpr stream_address address() const noexcept {
         return {key_, upper_, position_};
     }
@@ -427,7 +435,7 @@ public:
     template <class Char, class Traits>
     friend std::basic_ostream<Char, Traits>& operator<<(std::basic_ostream<Char, Traits>& os,
                                                         const thin_stream& s) {
-        return detail::write_stream(os, s, s.mode_);
+        return detail::write_stream(os, s);
     }
     template <class Char, class Traits>
     friend std::basic_istream<Char, Traits>& operator>>(std::basic_istream<Char, Traits>& is,
