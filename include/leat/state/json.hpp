@@ -28,6 +28,7 @@
 
 #include "leat/state/detail/document.hpp"
 #include "leat/state/detail/json_forms.hpp"
+#include "leat/state/detail/json_manifest.hpp"
 #include "leat/state/detail/json_streams.hpp"
 #include "leat/state/refused.hpp"
 

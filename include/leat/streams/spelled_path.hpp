@@ -178,6 +178,7 @@ private:
 struct spelled_place {
     stream_place place;
     opening as;
+    bool is_replica; // or an offspring of one
 };
 
 /// Follows a spelled path; nothing where the text is none.
@@ -204,8 +205,10 @@ inline std::optional<spelled_place> place_of(std::string_view spelled) {
         stream_place place = path.place(as == opening::engine  ? path_kind::engine
                                         : as == opening::chunk ? path_kind::chunk
                                                                : path_kind::stream);
+        bool is_replica = false;
         while (as != opening::engine && !reader.at_end()) {
             if (reader.take(".replica()")) {
+                is_replica = true;
                 continue;
             }
             const bool called = reader.call("offspring");
@@ -215,7 +218,7 @@ inline std::optional<spelled_place> place_of(std::string_view spelled) {
             }
             place = offspring_place({place.key, place.upper, 0}, *i_th);
         }
-        return reader.at_end() ? std::optional(spelled_place{place, as}) : std::nullopt;
+        return reader.at_end() ? std::optional(spelled_place{place, as, is_replica}) : std::nullopt;
     }
     return std::nullopt;
 }
