@@ -9,5 +9,8 @@
 #include "leat/testing/agrees_with_mean.hpp"
 #include "leat/testing/engines.hpp"
 #include "leat/testing/enumerating.hpp"
+#include "leat/testing/trace_comparison.hpp"
+#include "leat/testing/trace_file.hpp"
+#include "leat/testing/traced.hpp"
 
 #endif

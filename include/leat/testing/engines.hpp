@@ -51,12 +51,12 @@ public:
     Word operator()() {
         const std::size_t asked = ++asked_;
         if (asked > words_.size()) {
-            detail::message m;
+            leat::detail::message m;
             m.text("leat::scripted: the script holds ")
                 .value(static_cast<unsigned long long>(words_.size()))
                 .text(" words, and ")
                 .value(static_cast<unsigned long long>(asked));
-            detail::raise<stream_exhausted>(m.text(" were asked for"));
+            leat::detail::raise<stream_exhausted>(m.text(" were asked for"));
         }
         return words_[asked - 1];
     }

@@ -64,9 +64,9 @@ protected:
     /// The bits of the next word.
     constexpr std::uint64_t next_pattern() {
         if (drawn_ == draws) {
-            detail::message m;
+            leat::detail::message m;
             m.text("leat::enumerating: a case has ").value(draws);
-            detail::raise<stream_exhausted>(m.text(" words, and one more was asked for"));
+            leat::detail::raise<stream_exhausted>(m.text(" words, and one more was asked for"));
         }
         const int shift = bits * drawn_;
         ++drawn_;

@@ -5,9 +5,8 @@
 //   chi_squared_tails     P(X <= x) and P(X >= x), by the series and the continued fraction of the
 //                         incomplete gamma function
 //   kolmogorov_beyond     min(1, 2 P(D+ >= d)) of n samples; never below P(D >= d), where one of
-//   the
-//                         one-sided distances D+ and D- must reach d. As both seldom do, it is too
-//                         large by a factor of at most 1.02 where p is below 1/2, and of 1 +
+//                         the one-sided distances D+ and D- must reach d. As both seldom do, it is
+//                         too large by a factor of at most 1.02 where p is below 1/2, and of 1 +
 //                         (p/2)^3 where p is below 1/4. P(D+ >= d) itself is exact.
 //
 // Error, measured against GSL and Boost.Math in tests/testing: 2e-11 relative up to 10^6 degrees of
