@@ -18,6 +18,7 @@
 #include "leat/core/barrier.hpp"
 #include "leat/core/concepts.hpp"
 #include "leat/core/scaled.hpp"
+#include "leat/core/vector_constexpr.hpp"
 #include "leat/distributions/detail/discrete_support.hpp" // whole
 #include "leat/distributions/detail/evaluate.hpp"
 #include "leat/distributions/detail/law.hpp"
@@ -60,8 +61,7 @@ struct categorical_parameters {
     static constexpr void each(Self& self, Visit visit) {
         visit("weights", self.weights);
     }
-    friend constexpr bool operator==(const categorical_parameters&,
-                                     const categorical_parameters&) = default;
+    friend bool operator==(const categorical_parameters&, const categorical_parameters&) = default;
 };
 
 /// A choice by weight.
@@ -75,7 +75,7 @@ public:
 
     /// One outcome: always 0.
     constexpr categorical() : categorical(param_type{}) {}
-    constexpr explicit categorical(std::vector<double> weights)
+    LEAT_VECTOR_CONSTEXPR explicit categorical(std::vector<double> weights)
         : categorical(param_type{std::move(weights)}) {}
     constexpr explicit categorical(const param_type& p) : base(p), table_(weights()) {}
 

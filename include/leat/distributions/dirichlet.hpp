@@ -20,6 +20,7 @@
 #include "leat/core/errors.hpp"
 #include "leat/core/exponential.hpp"
 #include "leat/core/scaled.hpp"
+#include "leat/core/vector_constexpr.hpp"
 #include "leat/distributions/detail/evaluate.hpp" // quotient, product
 #include "leat/distributions/detail/law.hpp"
 #include "leat/distributions/gamma.hpp"
@@ -56,8 +57,7 @@ struct dirichlet_parameters {
     static constexpr void each(Self& self, Visit visit) {
         visit("alpha", self.alpha);
     }
-    friend constexpr bool operator==(const dirichlet_parameters&,
-                                     const dirichlet_parameters&) = default;
+    friend bool operator==(const dirichlet_parameters&, const dirichlet_parameters&) = default;
 };
 
 /// The Dirichlet law.
@@ -70,10 +70,10 @@ public:
     using base::param_type;
 
     /// One share, which is all.
-    constexpr dirichlet() : dirichlet(param_type{}) {}
-    constexpr explicit dirichlet(std::vector<double> alpha)
+    LEAT_VECTOR_CONSTEXPR dirichlet() : dirichlet(param_type{}) {}
+    LEAT_VECTOR_CONSTEXPR explicit dirichlet(std::vector<double> alpha)
         : dirichlet(param_type{std::move(alpha)}) {}
-    constexpr explicit dirichlet(const param_type& p) : base(p) {
+    LEAT_VECTOR_CONSTEXPR explicit dirichlet(const param_type& p) : base(p) {
         real sum = 0.0;
         for (const double a : alpha()) {
             gammas_.push_back(gamma<double>(a, 1.0));
@@ -85,7 +85,7 @@ public:
     using base::operator();
     /// A draw.
     template <random_words G>
-    [[nodiscard]] constexpr std::vector<double> operator()(G& g) const {
+    [[nodiscard]] LEAT_VECTOR_CONSTEXPR std::vector<double> operator()(G& g) const {
         std::vector<double> x(alpha().size(), 0.0);
         draw_into(std::span<double>(x), g);
         return x;
@@ -118,7 +118,7 @@ public:
         return param().alpha;
     }
     /// alpha[i] over the sum of all.
-    [[nodiscard]] constexpr std::vector<double> mean() const {
+    [[nodiscard]] LEAT_VECTOR_CONSTEXPR std::vector<double> mean() const {
         std::vector<double> result;
         for (const double a : alpha()) {
             result.push_back(detail::quotient(a, total_));
@@ -126,7 +126,7 @@ public:
         return result;
     }
     /// m[i] (1 - m[i]) / (sum of alpha + 1), m the mean.
-    [[nodiscard]] constexpr std::vector<double> variance() const {
+    [[nodiscard]] LEAT_VECTOR_CONSTEXPR std::vector<double> variance() const {
         std::vector<double> result;
         for (std::size_t i = 0; i < alpha().size(); ++i) {
             result.push_back(covariance_of(i, i));
@@ -134,7 +134,7 @@ public:
         return result;
     }
     /// -m[i] m[j] / (sum of alpha + 1), and the variances.
-    [[nodiscard]] constexpr std::vector<std::vector<double>> covariance() const {
+    [[nodiscard]] LEAT_VECTOR_CONSTEXPR std::vector<std::vector<double>> covariance() const {
         std::vector<std::vector<double>> result;
         for (std::size_t i = 0; i < alpha().size(); ++i) {
             std::vector<double> row;

@@ -61,8 +61,7 @@ struct empirical_parameters {
     static constexpr void each(Self& self, Visit visit) {
         visit("values", self.values);
     }
-    friend constexpr bool operator==(const empirical_parameters&,
-                                     const empirical_parameters&) = default;
+    friend bool operator==(const empirical_parameters&, const empirical_parameters&) = default;
 };
 
 /// The empirical law.

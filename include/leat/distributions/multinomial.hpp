@@ -21,6 +21,7 @@
 #include "leat/core/concepts.hpp"
 #include "leat/core/errors.hpp"
 #include "leat/core/scaled.hpp"
+#include "leat/core/vector_constexpr.hpp"
 #include "leat/distributions/binomial.hpp"
 #include "leat/distributions/detail/discrete_support.hpp"
 #include "leat/distributions/detail/evaluate.hpp" // or_zero
@@ -56,8 +57,7 @@ struct multinomial_parameters {
         visit("n", self.n);
         visit("weights", self.weights);
     }
-    friend constexpr bool operator==(const multinomial_parameters&,
-                                     const multinomial_parameters&) = default;
+    friend bool operator==(const multinomial_parameters&, const multinomial_parameters&) = default;
 };
 
 /// The multinomial law.
@@ -72,7 +72,7 @@ public:
 
     /// One choice of one outcome.
     constexpr multinomial() : multinomial(param_type{}) {}
-    constexpr multinomial(detail::number_integer auto n, std::vector<double> weights)
+    LEAT_VECTOR_CONSTEXPR multinomial(detail::number_integer auto n, std::vector<double> weights)
         : multinomial(param_type{detail::to_integer<Int>(param_type::law_name, "n", n),
                                  std::move(weights)}) {}
     constexpr explicit multinomial(const param_type& p) : base(p) { build(); }
@@ -115,7 +115,7 @@ public:
         return this->param().weights;
     }
     /// n p[i], p the weights over their sum.
-    [[nodiscard]] constexpr std::vector<double> mean() const {
+    [[nodiscard]] LEAT_VECTOR_CONSTEXPR std::vector<double> mean() const {
         std::vector<double> result;
         for (const double p : chances_) {
             result.push_back(detail::product(static_cast<double>(n()), p));
@@ -123,7 +123,7 @@ public:
         return result;
     }
     /// n p[i] (1 - p[i]).
-    [[nodiscard]] constexpr std::vector<double> variance() const {
+    [[nodiscard]] LEAT_VECTOR_CONSTEXPR std::vector<double> variance() const {
         std::vector<double> result;
         for (std::size_t i = 0; i < chances_.size(); ++i) {
             result.push_back(covariance_of(i, i));
@@ -131,7 +131,7 @@ public:
         return result;
     }
     /// -n p[i] p[j], and the variances.
-    [[nodiscard]] constexpr std::vector<std::vector<double>> covariance() const {
+    [[nodiscard]] LEAT_VECTOR_CONSTEXPR std::vector<std::vector<double>> covariance() const {
         std::vector<std::vector<double>> result;
         for (std::size_t i = 0; i < chances_.size(); ++i) {
             std::vector<double> row;
@@ -159,7 +159,7 @@ private:
         return i == j || size == 0 ? size : -size;
     }
 
-    constexpr void build() {
+    LEAT_VECTOR_CONSTEXPR void build() {
         double largest = 0;
         for (const double w : weights()) {
             largest = w > largest ? w : largest;

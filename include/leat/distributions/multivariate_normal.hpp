@@ -19,6 +19,7 @@
 #include "leat/core/barrier.hpp"
 #include "leat/core/concepts.hpp"
 #include "leat/core/errors.hpp"
+#include "leat/core/vector_constexpr.hpp"
 #include "leat/distributions/detail/covariance_factor.hpp"
 #include "leat/distributions/detail/into_range.hpp"
 #include "leat/distributions/detail/law.hpp"
@@ -63,8 +64,8 @@ struct multivariate_normal_parameters {
         visit("mean", self.mean);
         visit("covariance", self.covariance);
     }
-    friend constexpr bool operator==(const multivariate_normal_parameters&,
-                                     const multivariate_normal_parameters&) = default;
+    friend bool operator==(const multivariate_normal_parameters&,
+                           const multivariate_normal_parameters&) = default;
 };
 
 /// The multivariate normal law.
@@ -78,16 +79,17 @@ public:
     using base::param_type;
 
     /// The standard normal law in one dimension.
-    constexpr multivariate_normal() : multivariate_normal(param_type{}) {}
-    constexpr multivariate_normal(std::vector<double> mean,
-                                  std::vector<std::vector<double>> covariance)
+    LEAT_VECTOR_CONSTEXPR multivariate_normal() : multivariate_normal(param_type{}) {}
+    LEAT_VECTOR_CONSTEXPR multivariate_normal(std::vector<double> mean,
+                                              std::vector<std::vector<double>> covariance)
         : multivariate_normal(param_type{std::move(mean), std::move(covariance)}) {}
-    constexpr explicit multivariate_normal(const param_type& p) : base(p), factor_(p.covariance) {}
+    LEAT_VECTOR_CONSTEXPR explicit multivariate_normal(const param_type& p)
+        : base(p), factor_(p.covariance) {}
 
     using base::operator();
     /// A draw.
     template <random_words G>
-    [[nodiscard]] constexpr std::vector<double> operator()(G& g) const {
+    [[nodiscard]] LEAT_VECTOR_CONSTEXPR std::vector<double> operator()(G& g) const {
         std::vector<double> x(dimension(), 0.0);
         draw_into(std::span<double>(x), g);
         return x;

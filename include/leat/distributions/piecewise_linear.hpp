@@ -20,6 +20,7 @@
 #include "leat/core/concepts.hpp"
 #include "leat/core/scaled.hpp"
 #include "leat/core/square_root.hpp"
+#include "leat/core/vector_constexpr.hpp"
 #include "leat/distributions/detail/evaluate.hpp"
 #include "leat/distributions/detail/into_range.hpp"
 #include "leat/distributions/detail/law.hpp"
@@ -138,8 +139,8 @@ struct piecewise_linear_parameters {
         visit("points", self.points);
         visit("densities", self.densities);
     }
-    friend constexpr bool operator==(const piecewise_linear_parameters&,
-                                     const piecewise_linear_parameters&) = default;
+    friend bool operator==(const piecewise_linear_parameters&,
+                           const piecewise_linear_parameters&) = default;
 };
 
 /// The law of a piecewise linear density.
@@ -257,13 +258,13 @@ public:
     }
 
 private:
-    static constexpr std::vector<double> areas_of(const param_type& p) {
+    static LEAT_VECTOR_CONSTEXPR std::vector<double> areas_of(const param_type& p) {
         std::vector<double> areas;
         detail::each_line(p.points, p.densities,
                           [&](double area, const detail::sloping_line&) { areas.push_back(area); });
         return areas;
     }
-    static constexpr std::vector<detail::sloping_line> lines_of(const param_type& p) {
+    static LEAT_VECTOR_CONSTEXPR std::vector<detail::sloping_line> lines_of(const param_type& p) {
         std::vector<detail::sloping_line> lines;
         detail::each_line(p.points, p.densities,
                           [&](double, const detail::sloping_line& line) { lines.push_back(line); });

@@ -24,6 +24,7 @@
 #include "leat/core/concepts.hpp"
 #include "leat/core/errors.hpp"
 #include "leat/core/text.hpp"
+#include "leat/core/vector_constexpr.hpp"
 #include "leat/distributions/detail/law.hpp" // read_field and write_field of a list
 #include "leat/uniform/uniform_integer.hpp"  // number_integer
 #include "leat/uniform/unit.hpp"
@@ -104,7 +105,7 @@ public:
         return sums_[leaves_ + entry_or_refuse(i)];
     }
     /// All weights.
-    [[nodiscard]] constexpr std::vector<double> weights() const {
+    [[nodiscard]] LEAT_VECTOR_CONSTEXPR std::vector<double> weights() const {
         std::vector<double> result;
         result.reserve(size_);
         for (std::size_t i = 0; i < size_; ++i) {
@@ -130,7 +131,7 @@ public:
         return use(weights());
     }
 
-    friend constexpr bool operator==(const weighted_index&, const weighted_index&) = default;
+    friend bool operator==(const weighted_index&, const weighted_index&) = default;
 
     /// Writes the number of weights and the weights, to the bit.
     template <class Char, class Traits>

@@ -17,6 +17,7 @@
 
 #include "leat/core/concepts.hpp"
 #include "leat/core/errors.hpp"
+#include "leat/core/vector_constexpr.hpp"
 #include "leat/uniform/uniform_integer.hpp"
 
 #include <bit>
@@ -77,7 +78,7 @@ constexpr Size as_size(std::uint64_t x) noexcept {
 /// half full. The keys met here are random, so their product with an odd constant spreads them.
 class index_map {
 public:
-    constexpr explicit index_map(std::uint64_t entries)
+    LEAT_VECTOR_CONSTEXPR explicit index_map(std::uint64_t entries)
         : bits_(65 - std::countl_zero(entries | 1)), slots_(std::size_t{1} << bits_) {}
 
     /// The value kept under `key`; a new key gets `value`.
@@ -121,7 +122,7 @@ constexpr std::uint64_t count_of(Int x, const char* parameter) {
 /// j = i + below(n - i), elements i and j of 0, 1, ..., n - 1 are swapped, and the first k are the
 /// sample. k calls of `below`. Sort the result where ascending order is wanted.
 template <detail::number_integer N, detail::number_integer K, random_words G>
-constexpr std::vector<std::uint64_t> sample_without_replacement(N n, K k, G& g) {
+LEAT_VECTOR_CONSTEXPR std::vector<std::uint64_t> sample_without_replacement(N n, K k, G& g) {
     const std::uint64_t size = detail::count_of(n, "n");
     const std::uint64_t wanted = detail::count_of(k, "k");
     if (wanted > size) {

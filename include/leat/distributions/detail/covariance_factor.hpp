@@ -16,6 +16,7 @@
 #include "leat/core/error_free.hpp" // magnitude
 #include "leat/core/scaled.hpp"
 #include "leat/core/square_root.hpp"
+#include "leat/core/vector_constexpr.hpp"
 #include "leat/distributions/detail/evaluate.hpp" // or_zero, inverse
 #include "leat/distributions/detail/law.hpp"      // fault
 
@@ -31,7 +32,7 @@ class covariance_factor {
     using matrix = std::vector<std::vector<double>>;
 
 public:
-    constexpr explicit covariance_factor(const matrix& covariance)
+    LEAT_VECTOR_CONSTEXPR explicit covariance_factor(const matrix& covariance)
         : n_(covariance.size()), tolerance_(held(static_cast<double>(n_) * 0x1p-45)) {
         take_deviations(covariance);
         if (fault_.parameter == nullptr) {
@@ -94,7 +95,7 @@ private:
         return size < 0x1p-200 ? 0 : covariance < 0 ? -size : size;
     }
 
-    constexpr void take_correlations(const matrix& covariance) {
+    LEAT_VECTOR_CONSTEXPR void take_correlations(const matrix& covariance) {
         rest_ = matrix(n_, std::vector<double>(n_, 0.0));
         for (std::size_t i = 0; i < n_; ++i) {
             for (std::size_t j = 0; j < i; ++j) {
@@ -127,7 +128,7 @@ private:
     }
 
     /// One column of L for each pivot; what is left of the matrix is in rest_.
-    constexpr void factorise(const matrix& covariance) {
+    LEAT_VECTOR_CONSTEXPR void factorise(const matrix& covariance) {
         std::vector<std::size_t> open; // the variables without a pivot
         for (std::size_t i = 0; i < n_; ++i) {
             open.push_back(i);
