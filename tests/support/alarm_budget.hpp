@@ -150,6 +150,16 @@ inline constexpr declared_checks alarm_budget[] = {
     {"AlarmRate.OfRepeatedLooksIsSpentOnce", 2},
     {"PlantedFaultsOfUsers.AreFound", 4},
     {"CompatRand.IsUnbiasedWhereTheRemainderIsNot", 2},
+    {"Coverage.StudentIsExactForNormalValues", 6},
+    {"Coverage.PairsOfNormalValues", 1},
+    {"Coverage.WelchForUnequalVariances", 1},
+    {"Coverage.StudentForExponentialValues", 2},
+    {"Coverage.ProportionsOfRareEvents", 2},
+    {"Coverage.QuantileWhateverTheLaw", 1},
+    {"Coverage.BatchMeansOfOneLongRun", 2},
+    {"Coverage.BatchMeansWarnOfARunTooShort", 1},
+    {"Coverage.StoppingFallsShortAtFirst", 1},
+    {"TideGauge.TheAnswersAgree", 5},
     {"AlarmBudget.APValueBelowTheLevelFails", 1},
 };
 
