@@ -182,6 +182,7 @@ function concept_or_empty(i,    k) {
 function common_member(i,    declaration, k) {
     declaration = line[i]
     sub(/^ +/, "", declaration)
+    sub(/LEAT_VECTOR_CONSTEXPR/, "constexpr", declaration)
     for (k = 1; k <= same_count; ++k) {
         if (declaration ~ declarations[k]) {
             document(i, meanings[k])
@@ -225,6 +226,14 @@ function namespace_detail(i,    k, name) {
     if (line[i] ~ /^[a-z].* detail::[a-z_]+[(]/) { # the definition of what was declared there
         line[i] = "/** @cond */ " line[i]
         for (k = i; line[k] !~ /^}/; ++k) {
+        }
+        line[k] = line[k] " /** @endcond */"
+    }
+    if (line[i] ~ /^(class|struct) [a-z_]+::/) { # a specialisation for another library
+        for (k = i; line[k - 1] ~ /^(template|\/\/\/| )/; --k) {
+        }
+        line[k - 1] = line[k - 1] "/** @cond */"
+        for (k = i; line[k] !~ /^};/; ++k) {
         }
         line[k] = line[k] " /** @endcond */"
     }

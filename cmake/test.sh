@@ -11,6 +11,15 @@ if [ "${1-}" = --slow ]; then
     shift
 fi
 
+# libc++ of any version, with a clang++ that finds it.
+has_libcxx() {
+    for compiler in clang++ clang++-19; do
+        printf '#include <vector>\nint main() {}\n' |
+            "$compiler" -x c++ -stdlib=libc++ - -o /dev/null && return
+    done
+    return 1
+}
+
 need_build_tools
 need python3 has_command python3
 need pkgconf has_command pkg-config
@@ -21,6 +30,9 @@ need libgsl-dev has_header gsl/gsl_cdf.h
 need libmpfr-dev has_header mpfr.h
 need libgmp-dev has_header gmp.h
 need doxygen has_command doxygen
+need clang has_command clang++
+need libc++-dev has_libcxx
+need libc++abi-dev has_libcxx
 install_missing
 
 configure_and_build "$root/build/test" all -D LEAT_BUILD_TESTS=ON -D LEAT_BUILD_EXAMPLES=ON \

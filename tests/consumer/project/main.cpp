@@ -1,14 +1,15 @@
-// Uses leat as a stranger would; prints the version it was built with.
+// Uses leat as a stranger would, from two files; prints the version it was built with.
 
-#include "leat/leat.hpp"
+#include "other.hpp"
+
+#include "leat/version.hpp"
 
 #include <cstdio>
 
 int main() {
-    leat::source study{1};
-    leat::stream s = study.stream("consumer", 1);
-    const double u = leat::unit(s);
-    if (!(u > 0 && u < 1)) {
+    const leat::source study{20261201};
+    const event here = draw_event(study, 1);
+    if (!(here.wait > 0) || here != draw_elsewhere(study, 1) || here == draw_elsewhere(study, 2)) {
         return 1;
     }
     std::puts(leat::version);
