@@ -3,6 +3,8 @@
 #include "leat/testing/engines.hpp"
 
 #include "leat/core/concepts.hpp"
+#include "leat/uniform/uniform_integer.hpp"
+#include "leat/uniform/unit.hpp"
 
 #include <gtest/gtest.h>
 
@@ -71,6 +73,16 @@ TEST(Constant, NeverChanges) {
     for (int i = 0; i < 1000; ++i) {
         ASSERT_EQ(g(), 42u);
     }
+}
+
+TEST(WordForUnit, ScriptsUnitsAndIndices) {
+    for (const double u : {0x1p-60, 0.1, 0.25, 0.5, 0.7, 1 - 0x1p-53}) {
+        leat::scripted g{leat::word_for_unit(u), leat::word_for_unit(u)};
+        EXPECT_NEAR(leat::unit(g), u, 0x1p-53);
+        EXPECT_EQ(leat::below(8, g), static_cast<int>(8 * u)) << u;
+    }
+    EXPECT_THROW(static_cast<void>(leat::word_for_unit(0)), leat::invalid_parameter);
+    EXPECT_THROW(static_cast<void>(leat::word_for_unit(1)), leat::invalid_parameter);
 }
 
 TEST(Alternating, ReturnsTwoWordsInTurn) {

@@ -1,6 +1,7 @@
 // Engines for tests: they return what the test says, not random words.
 //
 //   leat::scripted g{0, 1, ~0ull};   // these words, then an error
+//   leat::scripted h{leat::word_for_unit(0.25)};   // leat::unit(h) is 0.25, leat::below(8, h) is 2
 //   leat::constant g{42};            // this word for ever
 //   leat::all_zeros g;  leat::all_ones g;
 //   leat::alternating g;             // all zeros, all ones, all zeros, ...; or any two words
@@ -123,6 +124,15 @@ private:
     Word other_;
 };
 
+/// The 64-bit word that stands u of the way up: from it leat::unit makes u, to within 2^-53, and
+/// leat::below(n, g) makes u n, rounded down. For scripts; u is to lie inside (0, 1).
+constexpr std::uint64_t word_for_unit(double u) {
+    if (!(u > 0 && u < 1)) {
+        leat::detail::refuse("word_for_unit", "u", u, "must be > 0 and < 1");
+    }
+    return static_cast<std::uint64_t>(u * 0x1p64);
+}
+
 using scripted = script<std::uint64_t>;
 using scripted32 = script<std::uint32_t>;
 using constant = repeated_word<std::uint64_t>;
@@ -146,6 +156,7 @@ using testing::constant;
 using testing::constant32;
 using testing::scripted;
 using testing::scripted32;
+using testing::word_for_unit;
 
 } // namespace leat
 
