@@ -1,9 +1,9 @@
 // The digest of what leat computes: a line for each thing, the same on every machine (promise P1)
 // and in every version of one major number (promise P7).
 //
-// To join: a line in engines.cpp, streams.cpp, uniform.cpp, maths.cpp, laws.cpp or regions.cpp.
-// The digest is FNV-1a, 64 bits (Fowler, Noll and Vo, 1991; constants from memory), over the bytes
-// of the values, the least significant first.
+// To join: a line in engines.cpp, streams.cpp, uniform.cpp, maths.cpp, laws.cpp, regions.cpp or
+// estimate.cpp. The digest is FNV-1a, 64 bits (Fowler, Noll and Vo, 1991; constants from memory),
+// over the bytes of the values, the least significant first.
 
 #ifndef LEAT_TESTS_DIGEST_DIGEST_HPP
 #define LEAT_TESTS_DIGEST_DIGEST_HPP
@@ -82,6 +82,7 @@ void laws();
 void discrete();
 void regions();
 void bulk();
+void estimate();
 
 } // namespace digests
 

@@ -19,4 +19,5 @@ int main(int count, char** arguments) {
     digests::discrete();
     digests::regions();
     digests::bulk();
+    digests::estimate();
 }
