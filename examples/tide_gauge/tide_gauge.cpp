@@ -7,7 +7,6 @@
 
 #include "gauge.hpp"
 
-#include "leat/self_check.hpp"
 #include "leat/streams/source.hpp"
 
 #include <charconv>
@@ -34,7 +33,6 @@ bool read(const char* name, const char* text, Int low, Int& x) {
 }
 
 int run(int months, std::uint64_t seed) {
-    leat::self_check_or_throw();
     const leat::source study{seed};
     const tide_gauge::instrument gauge;
     std::printf("month rms/mm  >30mm     lost    wakes   top/mm\n");
