@@ -9,6 +9,7 @@
 #include "leat/core.hpp"
 #include "leat/distributions.hpp"
 #include "leat/engines.hpp"
+#include "leat/estimate.hpp"
 #include "leat/regions.hpp"
 #include "leat/streams.hpp"
 #include "leat/uniform.hpp"

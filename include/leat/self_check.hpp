@@ -11,8 +11,8 @@
 //
 // It looks at what headers cannot refuse at compile time: the rounding mode, flush-to-zero (which
 // linking with -Ofast turns on for the whole program), contraction, excess precision, the parts of
-// fast-math, and golden digests of every engine, stream, mapping, law and region. It takes less
-// than a millisecond, draws from no engine of yours and changes nothing.
+// fast-math, and golden digests of every engine, stream, mapping, law and region, and of estimates.
+// It takes less than a millisecond, draws from no engine of yours and changes nothing.
 //
 // What it says holds for the flags of the file that calls it, and for the calling thread: control
 // registers belong to threads (a new one inherits those of its maker). Call it from one file,

@@ -15,6 +15,9 @@
 #include "leat/compat/historical.hpp"
 #include "leat/distributions.hpp"
 #include "leat/engines.hpp"
+#include "leat/estimate/exact_sum.hpp"
+#include "leat/estimate/mean_interval.hpp"
+#include "leat/estimate/running_moments.hpp"
 #include "leat/regions.hpp"
 #include "leat/self_check/report.hpp"
 #include "leat/streams.hpp"
@@ -360,6 +363,16 @@ inline void each_golden(golden_line line, void* context) {
         fill_chunks(values, exponential{1}, source(1).branch(++i));
         return values;
     });
+
+    golden.draws(
+        "estimate", 0xef2668c95e507899u,
+        [m = running_moments{}, sum = leat::exact_sum{}](auto& g) mutable {
+            m.add(unit(g));
+            m.add(exponential{1}(g));
+            sum.add(m.max());
+            const interval mean = normal_interval(m);
+            return std::array<double, 4>{mean.lower, mean.upper, m.skewness(), sum.value()};
+        });
 }
 
 /// Adds every digest that is not what it must be.
