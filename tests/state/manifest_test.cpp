@@ -7,6 +7,8 @@
 #include "leat/state/manifest.hpp"
 #include "leat/uniform/unit.hpp"
 
+#include "support/sanitized.hpp"
+
 #include <gtest/gtest.h>
 
 #include <array>
@@ -253,7 +255,8 @@ TEST(Manifest, IsRefusedWhereAnyCharacterWasChanged) {
             ++refused;
         }
     };
-    for (std::size_t i = 0; i < text.size(); ++i) {
+    const std::size_t stride = leat_test::sanitized ? 20 : 1;
+    for (std::size_t i = 0; i < text.size(); i += stride) {
         for (const char c : {'0', 'x', '"', ' ', '}', static_cast<char>(text[i] ^ 1)}) {
             std::string damaged = text;
             damaged[i] = c;
@@ -264,7 +267,7 @@ TEST(Manifest, IsRefusedWhereAnyCharacterWasChanged) {
         attempt(text.substr(0, i));
     }
     std::printf("%d damaged manifests refused, %d read as before\n", refused, same);
-    EXPECT_GT(refused, 10000);
+    EXPECT_GT(refused, leat_test::sanitized ? 500 : 10000);
     EXPECT_LT(same, 5);
 }
 
