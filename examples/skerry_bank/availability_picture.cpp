@@ -117,15 +117,15 @@ void draw_mean(svg& picture, const frame& at, double percent, std::size_t design
 void draw_legend(svg& picture, const input& in, const study_summary& summary) {
     for (std::size_t d = 0; d < colours.size(); ++d) {
         const double y = 82 + 22 * static_cast<double>(d);
-        const interval& x = summary.designs[d].availability;
+        const estimated_mean& x = summary.designs[d].availability;
         const std::string colour = colours[d];
         picture.rectangle(plot_left, y - 11, 22, 13,
                           "fill=\"" + colour + "\" fill-opacity=\"0.30\" stroke=\"" + colour +
                               "\" stroke-width=\"1.6\"");
         picture.text(plot_left + 32, y,
                      in.designs[d].name + ": mean " + fixed(100 * x.mean, 2) +
-                         " % (95 % interval " + fixed(100 * x.low(), 2) + " to " +
-                         fixed(100 * x.high(), 2) + "), dashed",
+                         " % (95 % interval " + fixed(100 * x.interval.lower, 2) + " to " +
+                         fixed(100 * x.interval.upper, 2) + "), dashed",
                      14);
     }
 }

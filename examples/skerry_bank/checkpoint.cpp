@@ -2,6 +2,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <cstdint>
 #include <iterator>
 #include <utility>
 
@@ -64,7 +65,17 @@ std::string difference(const input& a, const input& b) {
     return differing == std::end(parts) ? "" : differing->first;
 }
 
-bool is_count(double x) { return x >= 0 && x <= 0x1p30 && x == std::floor(x); }
+/// Whether an entry of a flat row is a count: the replication's number, or failures.
+bool is_count(std::size_t i) { return i % 4 == 0; }
+
+json to_json(const replication_row& row) {
+    const flat_row numbers = flatten(row);
+    json entry = json::array();
+    for (std::size_t i = 0; i < numbers.size(); ++i) {
+        entry.push_back(is_count(i) ? json(std::llround(numbers[i])) : json(numbers[i]));
+    }
+    return entry;
+}
 
 replication_row read_row(const json& entry) {
     flat_row numbers{};
@@ -73,10 +84,12 @@ replication_row read_row(const json& entry) {
                       "must each be a list of " + std::to_string(numbers.size()) + " numbers");
     }
     for (std::size_t i = 0; i < numbers.size(); ++i) {
-        const bool counted = i % 4 == 0; // the replication's number, or failures
-        if (!entry[i].is_number() || (counted && !is_count(entry[i].get<double>()))) {
+        const bool right = is_count(i) ? entry[i].is_number_unsigned() &&
+                                             entry[i].get<std::uint64_t>() < (1u << 30)
+                                       : entry[i].is_number();
+        if (!right) {
             throw refusal("rows", "holds " + entry[i].dump() + " in place of a " +
-                                      (counted ? "count" : "number"));
+                                      (is_count(i) ? "count" : "number"));
         }
         numbers[i] = entry[i].get<double>();
     }
@@ -93,11 +106,11 @@ void save_checkpoint(const std::string& file, const loaded_input& in, const row_
                      {"rows", json::array()}};
     for (const auto& row : rows) {
         if (row) {
-            document["rows"].push_back(flatten(*row));
+            document["rows"].push_back(to_json(*row));
         }
     }
     document["checksum"] = checksum(document);
-    write_file(file, spread_out(document, {"rows"}));
+    write_file_to_disk(file, spread_out(document, {"rows"}));
 }
 
 row_set load_checkpoint(const std::string& file, const loaded_input& in) {

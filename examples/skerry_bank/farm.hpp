@@ -9,7 +9,12 @@
 #include <string>
 #include <vector>
 
-#include <leat/leat.hpp>
+#include <leat/distributions/exponential.hpp>
+#include <leat/distributions/gamma.hpp>
+#include <leat/distributions/lognormal.hpp>
+#include <leat/distributions/weibull.hpp>
+#include <leat/regions/ellipse.hpp>
+#include <leat/streams/source.hpp>
 
 #include "input.hpp"
 #include "units.hpp"

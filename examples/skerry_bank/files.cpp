@@ -45,6 +45,18 @@ private:
     int number_;
 };
 
+void replace(const std::string& file, const std::string& text, bool onto_disk) {
+    const std::string part = file + ".part";
+    const bool written = [&] {
+        const descriptor target(part, O_WRONLY | O_CREAT | O_TRUNC);
+        return target.is_open() && target.put(text) && (!onto_disk || target.onto_disk());
+    }();
+    if (!written || std::rename(part.c_str(), file.c_str()) != 0) {
+        throw std::runtime_error("cannot write " + file + ": " +
+                                 std::generic_category().message(errno));
+    }
+}
+
 } // namespace
 
 std::string read_file(const std::string& file) {
@@ -60,16 +72,10 @@ std::string read_file(const std::string& file) {
     return text;
 }
 
-void write_file(const std::string& file, const std::string& text) {
-    const std::string part = file + ".part";
-    const bool written = [&] {
-        const descriptor target(part, O_WRONLY | O_CREAT | O_TRUNC);
-        return target.is_open() && target.put(text) && target.onto_disk();
-    }();
-    if (!written || std::rename(part.c_str(), file.c_str()) != 0) {
-        throw std::runtime_error("cannot write " + file + ": " +
-                                 std::generic_category().message(errno));
-    }
+void write_file(const std::string& file, const std::string& text) { replace(file, text, false); }
+
+void write_file_to_disk(const std::string& file, const std::string& text) {
+    replace(file, text, true);
     // The new name is on the disk when the folder is; not every file system can be asked for that.
     const std::filesystem::path folder = std::filesystem::path(file).parent_path();
     static_cast<void>(

@@ -8,7 +8,8 @@
 #ifndef SKERRY_BANK_PART_HPP
 #define SKERRY_BANK_PART_HPP
 
-#include <leat/leat.hpp>
+#include <leat/streams/address.hpp>
+#include <leat/streams/source.hpp>
 
 #include "farm.hpp"
 #include "units.hpp"

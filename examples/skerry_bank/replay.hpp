@@ -5,7 +5,7 @@
 
 #include <string>
 
-#include <leat/leat.hpp>
+#include <leat/streams/source.hpp>
 
 #include "farm.hpp"
 #include "input.hpp"

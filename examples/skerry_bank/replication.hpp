@@ -12,7 +12,7 @@
 #ifndef SKERRY_BANK_REPLICATION_HPP
 #define SKERRY_BANK_REPLICATION_HPP
 
-#include <leat/leat.hpp>
+#include <leat/streams/source.hpp>
 
 #include "farm.hpp"
 #include "input.hpp"

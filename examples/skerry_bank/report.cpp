@@ -27,8 +27,8 @@ std::string heading(const input& in) {
            " days, seed " + seed_text(in.seed) + "\n";
 }
 
-std::string plus_minus(const interval& x, double unit, int digits) {
-    return fixed(x.mean / unit, digits) + " +/- " + fixed(x.half_width / unit, digits);
+std::string plus_minus(const estimated_mean& x, double unit, int digits) {
+    return fixed(x.mean / unit, digits) + " +/- " + fixed(x.interval.half_width() / unit, digits);
 }
 
 /// Writes the lines of the table: a label, then a column for each design, wide enough for its name.
@@ -56,9 +56,10 @@ constexpr double gigawatt_hour = 1000; // megawatt-hours
 std::string table(const input& in, const study_summary& summary) {
     const design_summary& a = summary.designs[0];
     const design_summary& b = summary.designs[1];
-    const auto gain_line = [](std::string_view label, const interval& x) {
+    const auto gain_line = [](std::string_view label, const estimated_mean& x) {
         return "  " + left(label, 38) + right(plus_minus(x, percent, 3), 18) + "   [" +
-               fixed(x.low() / percent, 3) + ", " + fixed(x.high() / percent, 3) + "]\n";
+               fixed(x.interval.lower / percent, 3) + ", " + fixed(x.interval.upper / percent, 3) +
+               "]\n";
     };
     const line_writer line(in);
     std::string text = heading(in);

@@ -30,11 +30,11 @@ json to_json(const input& in, const replication_row& row) {
 }
 
 // Nine digits: more than the intervals warrant, and fewer than a compiler's freedom could reach.
-json to_json(const interval& x) {
+json to_json(const estimated_mean& x) {
     return {{"mean", rounded(x.mean, 9)},
-            {"half_width", rounded(x.half_width, 9)},
-            {"low", rounded(x.low(), 9)},
-            {"high", rounded(x.high(), 9)}};
+            {"half_width", rounded(x.interval.half_width(), 9)},
+            {"low", rounded(x.interval.lower, 9)},
+            {"high", rounded(x.interval.upper, 9)}};
 }
 
 json to_json(const input& in, const study_summary& summary) {

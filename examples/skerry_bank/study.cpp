@@ -5,6 +5,7 @@
 #include <chrono>
 #include <filesystem>
 #include <iostream>
+#include <stdexcept>
 #include <utility>
 
 #include <leat/self_check.hpp>
@@ -80,7 +81,11 @@ std::vector<replication_row> run_all(const study& made, const options& chosen,
     row_set first = first_rows(made, chosen);
     const auto save = saver(made, chosen);
     if (save) {
-        save(first); // a place that cannot be written to is found now, not after hours
+        try { // a place that cannot be written to is found now, not after hours
+            save(first);
+        } catch (const std::runtime_error& e) {
+            throw refusal("--checkpoint", e.what());
+        }
     }
     collector rows(std::move(first), {.save = save,
                                       .save_every = chosen.checkpoint_every,

@@ -7,8 +7,8 @@
 
 #include <functional>
 
-#include <leat/leat.hpp>
 #include <leat/self_check/report.hpp>
+#include <leat/streams/source.hpp>
 
 #include "collector.hpp"
 #include "farm.hpp"

@@ -6,25 +6,35 @@
 #include <array>
 #include <vector>
 
+#include <leat/estimate/interval.hpp>
+
 #include "rows.hpp"
-#include "statistics.hpp"
 
 namespace skerry {
 
-/// One design's means over the replications.
+inline constexpr double confidence = 0.95;
+
+/// A mean over the replications, and Student's interval for what it estimates.
+struct estimated_mean {
+    double mean;
+    leat::interval interval;
+};
+
+/// One design's means.
 struct design_summary {
-    interval availability;
-    interval lost_energy_mwh;
-    interval vessel_use;
-    interval failures;
+    estimated_mean availability;
+    estimated_mean lost_energy_mwh;
+    estimated_mean vessel_use;
+    estimated_mean failures;
 };
 
 struct study_summary {
     std::array<design_summary, 2> designs; ///< as run under the same random events
-    interval gain;       ///< availability, second less first, replication by replication
-    interval gain_apart; ///< the same with random events of its own for each
+    estimated_mean gain;       ///< availability, second less first, replication by replication
+    estimated_mean gain_apart; ///< the same with random events of its own for each
 };
 
+/// Needs two rows or more, of replications 0, 1, 2, ... in any order: the bits are the same.
 study_summary summarise(const std::vector<replication_row>& rows);
 
 /// How many times as narrow the same random events make the gain's interval; infinite where they

@@ -5,7 +5,7 @@
 
 #include <vector>
 
-#include <leat/leat.hpp>
+#include <leat/streams/source.hpp>
 
 #include "farm.hpp"
 #include "units.hpp"

@@ -11,14 +11,12 @@
 #include <fstream>
 #include <iterator>
 #include <string>
+#include <utility>
 #include <vector>
 
 #include <gtest/gtest.h>
-#include <nlohmann/json.hpp>
 
 namespace skerry_test {
-
-using json = nlohmann::ordered_json;
 
 inline std::string read_file(const std::filesystem::path& path) {
     std::ifstream file(path, std::ios::binary);
@@ -43,47 +41,54 @@ inline std::vector<std::string> lines_of(const std::string& text) {
     return lines;
 }
 
+/// A results file but for the line that every release changes.
+inline std::string without_version(const std::string& results) {
+    std::string text;
+    for (const std::string& line : lines_of(results)) {
+        if (!line.starts_with("\"leat_version\"")) {
+            text += line + "\n";
+        }
+    }
+    return text;
+}
+
 struct run_result {
-    int status;
+    int status; ///< the exit status; 128 and the signal's number where one ended the program
     std::string out, err;
     std::filesystem::path folder; ///< what was given as --output
 };
 
-class skerry_bank : public testing::Test {
+class program_test : public testing::Test {
 protected:
-    skerry_bank() {
+    program_test() {
         const auto* const info = testing::UnitTest::GetInstance()->current_test_info();
         home_ = std::filesystem::path(testing::TempDir()) /
                 (std::string("skerry_bank_") + info->name() + "_" + std::to_string(getpid()));
         std::filesystem::create_directories(home_);
     }
-    ~skerry_bank() override { std::filesystem::remove_all(home_); }
+    ~program_test() override { std::filesystem::remove_all(home_); }
 
     /// Runs the program with these arguments and an output folder of its own.
     run_result run(std::vector<std::string> arguments) {
+        return run_by("", LEAT_SKERRY_BANK_PROGRAM, std::move(arguments));
+    }
+
+    /// Runs a program, with something before it, as the shell reads it.
+    run_result run_by(const std::string& before, const std::string& program,
+                      std::vector<std::string> arguments) {
         const std::filesystem::path folder = home_ / ("run_" + std::to_string(runs_++));
         arguments.insert(arguments.end(), {"--output", folder.string()});
-        return run_as_given(arguments, folder);
+        return execute(before, program, arguments, folder);
     }
 
     run_result run_as_given(const std::vector<std::string>& arguments,
                             const std::filesystem::path& folder) {
-        std::string command = quoted(LEAT_SKERRY_BANK_PROGRAM);
-        for (const std::string& argument : arguments) {
-            command += " " + quoted(argument);
-        }
-        command += " >" + quoted(home_ / "out") + " 2>" + quoted(home_ / "err");
-        const int status = std::system(command.c_str());
-        return {WIFEXITED(status) ? WEXITSTATUS(status) : -1, read_file(home_ / "out"),
-                read_file(home_ / "err"), folder};
+        return execute("", LEAT_SKERRY_BANK_PROGRAM, arguments, folder);
     }
 
-    /// A copy of an input with a change made to it.
-    template <class Change>
-    std::string changed(const std::filesystem::path& input, Change change) {
-        json document = json::parse(read_file(input));
-        change(document);
-        return write_input(document.dump());
+    /// A file of this test's own.
+    [[nodiscard]] std::string own_file(const std::string& name) const {
+        return (home_ / name).string();
     }
 
     std::string write_input(const std::string& text) {
@@ -92,10 +97,28 @@ protected:
         return path.string();
     }
 
+    /// What results.json must be for small.json.
+    [[nodiscard]] std::string expected_results() const {
+        return without_version(read_file(source_ / "tests" / "expected" / "results.json"));
+    }
+
     const std::filesystem::path source_ = LEAT_SKERRY_BANK_DIR;
     const std::string small_ = (source_ / "tests" / "small.json").string();
 
 private:
+    run_result execute(const std::string& before, const std::string& program,
+                       const std::vector<std::string>& arguments,
+                       const std::filesystem::path& folder) {
+        std::string command = before + " " + quoted(program);
+        for (const std::string& argument : arguments) {
+            command += " " + quoted(argument);
+        }
+        command += " >" + quoted(home_ / "out") + " 2>" + quoted(home_ / "err");
+        const int status = std::system(command.c_str());
+        return {WIFEXITED(status) ? WEXITSTATUS(status) : 128 + WTERMSIG(status),
+                read_file(home_ / "out"), read_file(home_ / "err"), folder};
+    }
+
     static std::string quoted(const std::string& argument) {
         std::string safe = "'";
         for (const char c : argument) {

@@ -12,10 +12,25 @@
 
 #include <gsl/gsl_cdf.h>
 
+#include <nlohmann/json.hpp>
+
 #include "run_program.hpp"
 
 namespace skerry_test {
 namespace {
+
+using json = nlohmann::ordered_json;
+
+class skerry_bank : public program_test {
+protected:
+    /// A copy of an input with a change made to it.
+    template <class Change>
+    std::string changed(const std::filesystem::path& input, Change change) {
+        json document = json::parse(read_file(input));
+        change(document);
+        return write_input(document.dump());
+    }
+};
 
 // "results.json is byte-identical for 1, 2, 3 and 8 threads", and so is all else.
 TEST_F(skerry_bank, gives_the_same_bytes_on_any_number_of_threads) {
@@ -106,28 +121,16 @@ TEST_F(skerry_bank, an_added_component_changes_no_other) {
     }
 }
 
-std::string without_version(const std::string& results) {
-    std::string text;
-    for (const std::string& line : lines_of(results)) {
-        if (!line.starts_with("\"leat_version\"")) {
-            text += line + "\n";
-        }
-    }
-    return text;
-}
-
 // Our own golden files: what a seed yields changes only with a new major version (P7). To renew
 // them: leat_skerry_bank --input small.json --output expected >expected/report.txt
 TEST_F(skerry_bank, gives_the_expected_output) {
     const run_result small = run({"--input", small_});
     ASSERT_EQ(small.status, 0) << small.err;
-    const std::filesystem::path expected = source_ / "tests" / "expected";
-    EXPECT_EQ(without_version(read_file(small.folder / "results.json")),
-              without_version(read_file(expected / "results.json")));
+    EXPECT_EQ(without_version(read_file(small.folder / "results.json")), expected_results());
     const auto table = [](const std::string& report) { // without the name of the output folder
         return report.substr(0, report.find("\nWritten: "));
     };
-    EXPECT_EQ(table(small.out), table(read_file(expected / "report.txt")));
+    EXPECT_EQ(table(small.out), table(read_file(source_ / "tests" / "expected" / "report.txt")));
     EXPECT_EQ(json::parse(read_file(small.folder / "results.json")).at("notice"),
               "This is a planning illustration on invented data, not advice. Offshore work follows "
               "local codes and licensed practice.");
@@ -560,6 +563,15 @@ TEST_F(skerry_bank, refuses_bad_options) {
         {{"--seed", "two\nlines"}, "--seed: is \"two\\x0alines\""},
         {{"--only", "-1"}, "--only: is \"-1\""},
         {{"--input", small_, "--only", "24"}, "--only: is 24, must be below"},
+        {{"--driver", "fork"}, "--driver: is \"fork\", must be one of jthread, openmp, tbb"},
+        {{"--checkpoint-every", "5"}, "--checkpoint-every: needs --checkpoint"},
+        {{"--checkpoint", "x", "--checkpoint-every", "0"}, "--checkpoint-every: is \"0\""},
+        {{"--only", "1", "--resume", "x"}, "--resume: does not go with --only"},
+        {{"--only", "1", "--checkpoint", "x"}, "--checkpoint: does not go with --only"},
+        {{"--only", "1", "--rehearse", "error:1"}, "--rehearse: does not go with --only"},
+        {{"--rehearse", "17"}, "--rehearse: is \"17\", must be error:R or crash:R"},
+        {{"--rehearse", "panic:17"}, "--rehearse: is \"panic:17\""},
+        {{"--rehearse", "error:"}, "--rehearse: is \"error:\""},
     };
     for (const auto& [arguments, part] : cases) {
         expect_refusal(run(arguments), part);
@@ -572,8 +584,9 @@ TEST_F(skerry_bank, refuses_bad_options) {
 TEST_F(skerry_bank, help_names_every_option_and_the_notice) {
     const run_result help = run({"--help"});
     EXPECT_EQ(help.status, 0);
-    for (const char* part : {"--input", "--seed", "--replications", "--threads", "--only",
-                             "--output", "--help", "local codes and licensed practice"}) {
+    for (const char* part : {"--input", "--seed", "--replications", "--threads", "--driver",
+                             "--only", "--output", "--checkpoint", "--checkpoint-every", "--resume",
+                             "--rehearse", "--help", "local codes and licensed practice"}) {
         EXPECT_NE(help.out.find(part), std::string::npos) << part;
     }
     EXPECT_FALSE(std::filesystem::exists(help.folder));
