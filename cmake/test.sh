@@ -29,6 +29,9 @@ need libboost-dev has_header boost/math/distributions/students_t.hpp
 need libgsl-dev has_header gsl/gsl_cdf.h
 need libmpfr-dev has_header mpfr.h
 need libgmp-dev has_header gmp.h
+need libtbb-dev has_header tbb/task_arena.h
+need libopenmpi-dev has_command mpicxx
+need openmpi-bin has_command mpirun
 need doxygen has_command doxygen
 need clang has_command clang++
 need libc++-dev has_libcxx
@@ -36,5 +39,6 @@ need libc++abi-dev has_libcxx
 install_missing
 
 configure_and_build "$root/build/test" all -D LEAT_BUILD_TESTS=ON -D LEAT_BUILD_EXAMPLES=ON \
+    -D LEAT_EXAMPLES_WITH_OPENMP=ON -D LEAT_EXAMPLES_WITH_TBB=ON -D LEAT_EXAMPLES_WITH_MPI=ON \
     -D LEAT_BUILD_SLOW_TESTS=$slow -D LEAT_WARNINGS_AS_ERRORS="${LEAT_WARNINGS_AS_ERRORS:-OFF}"
 ctest --test-dir "$root/build/test" --output-on-failure --parallel "$(jobs)" "$@"
