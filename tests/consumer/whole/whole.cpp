@@ -1,7 +1,6 @@
 // All of leat at once, something of every area used, as a stranger's compiler and flags see it.
 
 #include "leat/leat.hpp"
-#include "leat/self_check.hpp"
 #include "leat/testing.hpp"
 
 #include <array>
@@ -34,7 +33,6 @@ std::uint64_t use_engines(const leat::source& study) {
 } // namespace
 
 int main() {
-    leat::self_check_or_throw();
     const leat::source study{1};
     leat::stream s = study.stream("whole");
     std::array<double, 100> filled{};
