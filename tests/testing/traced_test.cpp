@@ -236,7 +236,7 @@ TEST(TraceFile, IsRefusedWhereverItIsChangedOrCut) {
 TEST(TraceFile, IsRefusedWhereItsPartsDoNotFit) {
     const auto with_number = [](std::size_t place, unsigned char value) {
         std::vector<unsigned char> data = leat::testing::encode_trace(small_trace());
-        data.resize(data.size() - 16);
+        data.erase(data.end() - 16, data.end()); // without the sum
         data[place] = value;
         leat::testing::detail::trace_writer out;
         out.raw(std::string(data.begin(), data.end()));

@@ -190,7 +190,8 @@ class traced {
 public:
     using result_type = std::invoke_result_t<engine_type&>;
 
-    traced(trace& t, std::string_view name, Engine engine)
+    // Engine is not deduced from here, but by the guide below: an lvalue is not to be copied.
+    traced(trace& t, std::string_view name, std::type_identity_t<Engine> engine)
         : engine_(std::forward<Engine>(engine)),
           track_(&t.open(name, detail::address_of(engine_))) {}
 
