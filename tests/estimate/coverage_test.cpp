@@ -16,7 +16,6 @@
 #include "leat/estimate/quantile_interval.hpp"
 #include "leat/estimate/stopping.hpp"
 #include "support/alarm_budget.hpp"
-#include "support/sanitized.hpp"
 #include "support/seeds.hpp"
 
 #include <boost/math/distributions/binomial.hpp>
@@ -38,7 +37,7 @@ using leat_test::count_test;
 using leat_test::is_rejected;
 using leat_test::outcome;
 
-constexpr std::uint64_t studies = leat_test::sanitized ? 5000 : 10000;
+constexpr std::uint64_t studies = 10000;
 
 /// How many of the studies give true.
 std::uint64_t count_studies(const char* name, const std::function<bool(leat::stream&)>& study,
