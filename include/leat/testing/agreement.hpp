@@ -28,13 +28,14 @@ namespace testing {
 
 /// The outcome of a check.
 struct agreement {
-    bool agrees = false;
+    bool agrees = false;   ///< whether nothing was found
     double statistic = 0;  ///< t, chi-square, distance: what the check says it is
     double p = 0;          ///< the chance of a statistic at least as extreme, if nothing is wrong
     double alarm_rate = 0; ///< as asked for: the check fails when p is below it
     std::uint64_t samples = 0; ///< how many were looked at
     std::string message;       ///< one line with all of it
 
+    /// Whether it agrees.
     explicit operator bool() const noexcept { return agrees; }
 
     /// The same as a test framework's result, with the message.

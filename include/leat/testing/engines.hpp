@@ -46,9 +46,12 @@ public:
 template <std::unsigned_integral Word>
 class script : public full_range<Word> {
 public:
+    /// From the words, the first to be drawn first.
     script(std::initializer_list<Word> words) : words_(words) {}
+    /// From the words, the first to be drawn first.
     explicit script(std::vector<Word> words) : words_(std::move(words)) {}
 
+    /// The next word.
     Word operator()() {
         const std::size_t asked = ++asked_;
         if (asked > words_.size()) {
@@ -76,7 +79,9 @@ private:
 template <std::unsigned_integral Word>
 class repeated_word : public full_range<Word> {
 public:
+    /// With the word to repeat.
     constexpr explicit repeated_word(Word word) noexcept : word_(word) {}
+    /// The word.
     constexpr Word operator()() const noexcept { return word_; }
 
     friend constexpr bool operator==(const repeated_word&, const repeated_word&) = default;
@@ -89,6 +94,7 @@ private:
 template <std::unsigned_integral Word>
 class only_zeros : public full_range<Word> {
 public:
+    /// 0.
     constexpr Word operator()() const noexcept { return 0; }
 
     friend constexpr bool operator==(const only_zeros&, const only_zeros&) = default;
@@ -98,6 +104,7 @@ public:
 template <std::unsigned_integral Word>
 class only_ones : public full_range<Word> {
 public:
+    /// The greatest word.
     constexpr Word operator()() const noexcept { return std::numeric_limits<Word>::max(); }
 
     friend constexpr bool operator==(const only_ones&, const only_ones&) = default;
@@ -107,9 +114,12 @@ public:
 template <std::unsigned_integral Word>
 class two_in_turn : public full_range<Word> {
 public:
+    /// No bit set, then every bit set.
     constexpr two_in_turn() noexcept : two_in_turn(0, std::numeric_limits<Word>::max()) {}
+    /// These two.
     constexpr two_in_turn(Word first, Word second) noexcept : next_(first), other_(second) {}
 
+    /// The next of the two.
     constexpr Word operator()() noexcept {
         const Word word = next_;
         next_ = other_;
@@ -133,15 +143,25 @@ constexpr std::uint64_t word_for_unit(double u) {
     return static_cast<std::uint64_t>(u * 0x1p64);
 }
 
+/// The given 64-bit words, then an error.
 using scripted = script<std::uint64_t>;
+/// The given 32-bit words, then an error.
 using scripted32 = script<std::uint32_t>;
+/// One 64-bit word for ever.
 using constant = repeated_word<std::uint64_t>;
+/// One 32-bit word for ever.
 using constant32 = repeated_word<std::uint32_t>;
+/// 64-bit words without a bit set.
 using all_zeros = only_zeros<std::uint64_t>;
+/// 32-bit words without a bit set.
 using all_zeros32 = only_zeros<std::uint32_t>;
+/// 64-bit words with every bit set.
 using all_ones = only_ones<std::uint64_t>;
+/// 32-bit words with every bit set.
 using all_ones32 = only_ones<std::uint32_t>;
+/// Two 64-bit words in turn.
 using alternating = two_in_turn<std::uint64_t>;
+/// Two 32-bit words in turn.
 using alternating32 = two_in_turn<std::uint32_t>;
 
 } // namespace testing

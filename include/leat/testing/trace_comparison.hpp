@@ -37,26 +37,27 @@ enum class parting {
 
 /// Where two runs of a stream part.
 struct divergence {
-    std::string stream;
-    parting how = parting::words;
-    std::uint64_t first = 0; ///< the draws that both runs share, surely
-    std::uint64_t last = 0;  ///< the first draw that differs is one of `first` to `last`
-    std::uint64_t draws_a = 0;
-    std::uint64_t draws_b = 0;
-    std::string label_before; ///< of the last draw that both runs share, surely
-    std::string label_a;      ///< of draw `last` in run A, where it has one
-    std::string label_b;
-    std::string address_a; ///< where the stream began, for those that have an address
-    std::string address_b;
+    std::string stream;           ///< its name
+    parting how = parting::words; ///< in words, labels or length
+    std::uint64_t first = 0;      ///< the draws that both runs share, surely
+    std::uint64_t last = 0;       ///< the first draw that differs is one of `first` to `last`
+    std::uint64_t draws_a = 0;    ///< how many run A drew
+    std::uint64_t draws_b = 0;    ///< and run B
+    std::string label_before;     ///< of the last draw that both runs share, surely
+    std::string label_a;          ///< of draw `last` in run A, where it has one
+    std::string label_b;          ///< and in run B
+    std::string address_a;        ///< where the stream began, for those that have an address
+    std::string address_b;        ///< and in run B
 };
 
 /// What two runs have in common, and what not.
 struct trace_comparison {
-    std::vector<divergence> parted;
+    std::vector<divergence> parted;     ///< streams that differ
     std::vector<std::string> only_in_a; ///< streams that the other run did not open
-    std::vector<std::string> only_in_b;
-    std::uint64_t alike = 0; ///< how many streams are the same in both
+    std::vector<std::string> only_in_b; ///< and the same of run B
+    std::uint64_t alike = 0;            ///< how many streams are the same in both
 
+    /// Whether no difference was found.
     [[nodiscard]] bool same() const noexcept {
         return parted.empty() && only_in_a.empty() && only_in_b.empty();
     }

@@ -45,33 +45,33 @@ namespace testing {
 
 /// The hashes after so many draws of a stream.
 struct trace_mark {
-    std::uint64_t words;
-    std::uint64_t labels;
-    std::uint32_t label; ///< of the last draw, as an index of the stream's labels
+    std::uint64_t words;  ///< the hash of the words so far
+    std::uint64_t labels; ///< the hash of their labels
+    std::uint32_t label;  ///< of the last draw, as an index of the stream's labels
 
     friend bool operator==(const trace_mark&, const trace_mark&) = default;
 };
 
 /// What was recorded of one stream.
 struct traced_stream {
-    std::string name;
-    std::string address; ///< where it began, for streams that have an address
-    std::uint64_t draws = 0;
-    std::uint64_t words = 0;
-    std::uint64_t labels = 0;
-    std::vector<std::string> label_texts{""};
-    std::uint32_t label = 0;
-    std::vector<trace_mark> marks;
+    std::string name;                         ///< as the program gave it
+    std::string address;                      ///< where it began, for streams that have an address
+    std::uint64_t draws = 0;                  ///< how many words were drawn
+    std::uint64_t words = 0;                  ///< the hash of them
+    std::uint64_t labels = 0;                 ///< the hash of their labels
+    std::vector<std::string> label_texts{""}; ///< in the order of their first use
+    std::uint32_t label = 0;                  ///< of the last draw, as an index of these
+    std::vector<trace_mark> marks;            ///< one for each stride in the range
 
     friend bool operator==(const traced_stream&, const traced_stream&) = default;
 };
 
 /// What was recorded of a run.
 struct recorded_trace {
-    std::uint64_t stride = 1024;
-    std::uint64_t from = 0;
-    std::uint64_t to = std::numeric_limits<std::uint64_t>::max();
-    std::vector<traced_stream> streams;
+    std::uint64_t stride = 1024;                                  ///< draws from mark to mark
+    std::uint64_t from = 0;                                       ///< no mark before so many draws
+    std::uint64_t to = std::numeric_limits<std::uint64_t>::max(); ///< nor after so many
+    std::vector<traced_stream> streams;                           ///< in the order of opening
 
     friend bool operator==(const recorded_trace&, const recorded_trace&) = default;
 };
