@@ -8,6 +8,7 @@
 #include "leat/streams/jump.hpp"
 #include "leat/streams/overlap.hpp"
 #include "leat/streams/path.hpp"
+#include "leat/streams/recorder.hpp"
 #include "leat/streams/refill.hpp"
 #include "leat/streams/seeding.hpp"
 #include "leat/streams/source.hpp"
@@ -15,5 +16,6 @@
 #include "leat/streams/steps.hpp"
 #include "leat/streams/steps_xorshift.hpp"
 #include "leat/streams/stream.hpp"
+#include "leat/streams/thin_stream.hpp"
 
 #endif

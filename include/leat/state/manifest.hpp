@@ -31,6 +31,7 @@
 #include "leat/streams/source.hpp"
 #include "leat/streams/spelled_path.hpp"
 #include "leat/streams/stream.hpp"
+#include "leat/streams/thin_stream.hpp"
 #include "leat/version.hpp"
 
 #include <cstddef>
@@ -46,8 +47,8 @@ namespace leat {
 
 /// An algorithm that a run's numbers rest on, and which form of it.
 struct run_algorithm {
-    std::string name;
-    std::string form;
+    std::string name; ///< what it is for
+    std::string form; ///< which method, in which version
 
     friend bool operator==(const run_algorithm&, const run_algorithm&) = default;
 };
@@ -83,6 +84,7 @@ public:
 
     /// The version of leat that wrote it.
     [[nodiscard]] const std::string& library() const noexcept { return library_; }
+    /// The algorithms that its numbers rest on.
     [[nodiscard]] const std::vector<run_algorithm>& algorithms() const noexcept {
         return algorithms_;
     }
@@ -103,6 +105,7 @@ public:
     [[nodiscard]] leat::stream stream(std::size_t opening) const {
         return opened<leat::stream>(opening);
     }
+    /// The same as a thin stream.
     [[nodiscard]] leat::thin_stream thin_stream(std::size_t opening) const {
         return opened<leat::thin_stream>(opening);
     }
@@ -111,6 +114,7 @@ public:
     /// nothing is changed, where it was not opened in this run. Replicas do not count. Refused
     /// where its address was opened twice, and the two do not stand at one place.
     bool restore(leat::stream& s) const { return restore_stream(s); }
+    /// The same for a thin stream.
     bool restore(leat::thin_stream& s) const { return restore_stream(s); }
 
     friend bool operator==(const manifest& a, const manifest& b) {

@@ -67,8 +67,8 @@ struct ledger_entry {
 
 /// Two openings of one address.
 struct repeated_opening {
-    ledger_entry first;
-    ledger_entry again;
+    ledger_entry first; ///< the first of that address
+    ledger_entry again; ///< the one that came later
 
     friend bool operator==(const repeated_opening&, const repeated_opening&) = default;
 };
@@ -95,10 +95,13 @@ inline std::string to_string(const repeated_opening& r) {
 /// The list of what a study opens. See above.
 class ledger : public detail::seed_recorder {
 public:
-    /// What happens when an address is opened a second time: it is listed by `repeated()`, or it
-    /// is refused at once.
-    enum class repeats { report, refuse };
+    /// What happens when an address is opened a second time.
+    enum class repeats {
+        report, ///< repeated() lists it
+        refuse, ///< it throws repeated_stream
+    };
 
+    /// An empty one.
     explicit ledger(repeats policy = repeats::report) noexcept : policy_(policy) {}
     ledger(const ledger&) = delete; // sources and streams point to it
     ledger& operator=(const ledger&) = delete;

@@ -9,7 +9,8 @@
 #ifndef LEAT_STREAMS_SEEDING_HPP
 #define LEAT_STREAMS_SEEDING_HPP
 
-#include "leat/streams/stream.hpp"
+#include "leat/streams/address.hpp"
+#include "leat/streams/thin_stream.hpp"
 
 #include <climits>
 #include <cstdint>

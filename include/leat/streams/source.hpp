@@ -23,6 +23,7 @@
 #include "leat/streams/recorder.hpp"
 #include "leat/streams/seeding.hpp" // an engine from an address
 #include "leat/streams/stream.hpp"
+#include "leat/streams/thin_stream.hpp"
 
 #include <array>
 #include <cstddef>
