@@ -1,9 +1,9 @@
 // An engine that leaves a trace of its draws, to find where two runs part.
 //
-//   leat::trace trace{"monday.trace"};                      // one a run
-//   leat::traced g{trace, "replication 713", s};            // s: any engine or stream, by
-//   reference g.label("repair time");                                 // what the next draws are
-//   for const double hours = repair(g);                         // the same values as from s
+//   leat::trace trace{"monday.trace"};             // one a run
+//   leat::traced g{trace, "replication 713", s};   // s: any engine or stream, by reference
+//   g.label("repair time");                        // what the next draws are for
+//   const double hours = repair(g);                // the same values as from s
 //   trace.save();
 //
 // Record the run that was right and the run that is wrong, then compare the two files:
@@ -50,10 +50,10 @@ namespace testing {
 
 /// What a trace records; see above.
 struct trace_options {
-    std::uint64_t stride = 1024;
-    std::uint64_t from = 0;
-    std::uint64_t to = std::numeric_limits<std::uint64_t>::max();
-    std::string only = {};
+    std::uint64_t stride = 1024;                                  ///< draws from mark to mark
+    std::uint64_t from = 0;                                       ///< no mark before so many draws
+    std::uint64_t to = std::numeric_limits<std::uint64_t>::max(); ///< nor after so many
+    std::string only = {}; ///< marks for the stream of this name only
 };
 
 namespace detail {
@@ -131,6 +131,7 @@ std::string address_of(const Engine& engine) {
 /// The record of a run, and the file it goes to.
 class trace {
 public:
+    /// A record that save() and the destructor write to the file `path`.
     explicit trace(std::string path, trace_options options = {})
         : path_(std::move(path)), options_(std::move(options)) {
         if (options_.stride == 0) {
@@ -190,6 +191,7 @@ class traced {
 public:
     using result_type = std::invoke_result_t<engine_type&>;
 
+    /// Traces an engine or stream under a name.
     // Engine is not deduced from here, but by the guide below: an lvalue is not to be copied.
     traced(trace& t, std::string_view name, std::type_identity_t<Engine> engine)
         : engine_(std::forward<Engine>(engine)),
@@ -197,6 +199,7 @@ public:
 
     traced(const traced&) = delete; // the copy's draws would be recorded as this one's
     traced& operator=(const traced&) = delete;
+    /// Takes over: the other may not be drawn from any more.
     traced(traced&& other) noexcept
         : engine_(std::forward<Engine>(other.engine_)),
           track_(std::exchange(other.track_, nullptr)) {}
