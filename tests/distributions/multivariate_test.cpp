@@ -439,8 +439,8 @@ void draw_from_broken(const Law& law) {
         } catch (const leat::engine_stuck&) {
         }
     };
-    try_with(leat::all_zeros{});
-    try_with(leat::all_ones{});
+    try_with(leat::constant{0});
+    try_with(leat::constant{~std::uint64_t{0}});
 }
 
 // P3, P5: no hang, nothing infinite.
