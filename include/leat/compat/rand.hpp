@@ -14,8 +14,7 @@
 //   lo + rand() % (hi - lo + 1)                      rand_between(lo, hi): unbiased, both ends in
 //   rand() < p * RAND_MAX, rand() % 100 < 30         rand_chance(p), rand_chance(0.3)
 //   (rand() << 16) | rand(), mrand48()               rand_stream()(): 64 bits
-//   -log(rand_unit), a sum of 12, a shuffle, ...     any sampler of leat, drawing from
-//   rand_stream()
+//   -log(rand() / ...), a sum of 12, a shuffle       samplers of leat, drawing from rand_stream()
 //
 // Threads. Under one process seed each thread has a stream of its own. The caller numbers the
 // threads, because a number given by the system would differ from run to run: rand_thread(i) makes
@@ -31,7 +30,7 @@
 // while no other thread draws, or that thread changes seeds wherever it happens to be. Without
 // srand() the seed is 1, as in C.
 //
-// Consumed: one 64-bit word a call; rand_below and rand_between more where they reject (unlikely).
+// Consumed: one 64-bit word a call; more, rarely, by rand_below, rand_between and rand_chance.
 // Frozen: the stream is source{seed}.stream("compat.rand", i), without a number
 // source{seed}.stream("compat.rand"); rand() is the upper 31 bits of a word.
 //
