@@ -31,6 +31,7 @@
 #include <cstddef>
 #include <cstdint>
 #include <limits>
+#include <optional>
 #include <tuple>
 #include <type_traits>
 
@@ -159,9 +160,10 @@ public:
     constexpr decltype(auto) arguments(Use use) const {
         return use(this->region(), removed_, this->known_measure());
     }
-    /// From those arguments; a measure of 0 is none.
-    static constexpr without from_arguments(const A& a, const B& b, typename A::real_type measure) {
-        return measure == 0 ? without(a, b) : without(a, b, measure);
+    /// From those arguments.
+    static constexpr without from_arguments(const A& a, const B& b,
+                                            std::optional<typename A::real_type> measure) {
+        return measure ? without(a, b, *measure) : without(a, b);
     }
 
     friend constexpr bool operator==(const without& a, const without& b) noexcept {

@@ -29,6 +29,7 @@
 
 #include <concepts>
 #include <cstdint>
+#include <optional>
 #include <type_traits>
 
 namespace leat {
@@ -143,8 +144,10 @@ protected:
         }
     }
 
-    /// The measure that was given, or 0.
-    [[nodiscard]] constexpr Real known_measure() const noexcept { return measure_; }
+    /// The measure, if it was given.
+    [[nodiscard]] constexpr std::optional<Real> known_measure() const noexcept {
+        return measure_ == 0 ? std::nullopt : std::optional<Real>(measure_);
+    }
 
 private:
     static constexpr std::uint32_t most_trials = 700000; // (1 - 1e-4)^700000 < 2^-100
@@ -184,10 +187,10 @@ public:
     constexpr decltype(auto) arguments(Use use) const {
         return use(this->region(), predicate_, this->known_measure());
     }
-    /// From those arguments; a measure of 0 is none.
+    /// From those arguments.
     static constexpr rejection from_arguments(const Region& region, Predicate predicate,
-                                              typename Region::real_type measure) {
-        return measure == 0 ? rejection(region, predicate) : rejection(region, predicate, measure);
+                                              std::optional<typename Region::real_type> measure) {
+        return measure ? rejection(region, predicate, *measure) : rejection(region, predicate);
     }
 
     /// Whether region and predicate are equal, where predicates can be compared.

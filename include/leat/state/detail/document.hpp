@@ -29,7 +29,7 @@ namespace leat::detail {
 
 /// A document of a type's content, an object with neither of the fields leat, version, checksum.
 template <json_value Json>
-Json seal(std::string_view type, std::uint64_t version, const Json& content) {
+[[gnu::noinline]] Json seal(std::string_view type, std::uint64_t version, const Json& content) {
     Json document = Json::object();
     document["leat"] = std::string(type);
     document["version"] = version;
@@ -45,7 +45,8 @@ Json seal(std::string_view type, std::uint64_t version, const Json& content) {
 /// The fields of a document's content. Refuses what is no document of this type and version, and
 /// what was changed since seal() made it. The document must outlive the fields.
 template <json_value Json>
-json_fields<Json> unseal(const Json& document, std::string_view type, std::uint64_t version) {
+[[gnu::noinline]] json_fields<Json> unseal(const Json& document, std::string_view type,
+                                           std::uint64_t version) {
     const std::string where(type);
     json_fields<Json> fields = json_field<Json>(document, where + ": the document").object();
     fields = {document, where};

@@ -6,8 +6,9 @@
 //               or, of a class made of others, a list {"parts": [{...}, {...}]}
 //
 // What a type must have for that stands in type_name.hpp. An argument is a number, true or false, a
-// list, an object of one of these kinds, or a class of the user's: one without members (a
-// predicate) is null, any other is left to its own to_json and from_json.
+// list, null for an optional one that is not there, an object of one of these kinds, or a class of
+// the user's: one without members (a predicate) is null, any other is left to its own to_json and
+// from_json.
 
 #ifndef LEAT_STATE_DETAIL_JSON_FORMS_HPP
 #define LEAT_STATE_DETAIL_JSON_FORMS_HPP
@@ -21,6 +22,8 @@
 #include <array>
 #include <concepts>
 #include <cstddef>
+#include <istream> // ws
+#include <optional>
 #include <sstream>
 #include <string>
 #include <type_traits>
@@ -46,6 +49,17 @@ struct is_list<std::vector<T>> : std::true_type {};
 template <class T, std::size_t N>
 struct is_list<std::array<T, N>> : std::true_type {};
 
+/// Gives an object a member.
+template <json_value Json>
+[[gnu::noinline]] void put(Json& object, const char* name, Json value) {
+    object[name] = std::move(value);
+}
+
+template <class T>
+inline constexpr bool is_optional = false;
+template <class T>
+inline constexpr bool is_optional<std::optional<T>> = true;
+
 template <json_value Json, class T>
 Json to_value(const T& x) {
     if constexpr (std::same_as<T, bool>) {
@@ -57,6 +71,8 @@ Json to_value(const T& x) {
     } else if constexpr (std::same_as<T, wide_integer>) {
         message m;
         return print(m, x).c_str();
+    } else if constexpr (is_optional<T>) {
+        return x ? to_value<Json>(*x) : Json(nullptr);
     } else if constexpr (is_list<T>::value) {
         Json list = Json::array();
         for (const auto& entry : x) {
@@ -82,13 +98,17 @@ T from_value(const json_field<Json>& field) {
         return field.template real<T>();
     } else if constexpr (std::same_as<T, wide_integer>) {
         return field.wide();
+    } else if constexpr (is_optional<T>) {
+        return field.is_null() ? T{} : T{from_value<typename T::value_type>(field)};
     } else if constexpr (saved<T>) {
         json_fields<Json> fields = field.object();
         T x = saved_form<T>::read(fields);
         fields.end();
         return x;
     } else if constexpr (std::is_empty_v<T> && std::default_initializable<T>) {
-        field.null();
+        if (!field.is_null()) {
+            field.refuse("must be null");
+        }
         return T{};
     } else {
         return field.template other<T>();
@@ -137,42 +157,48 @@ struct saved_form<T> {
     }
 };
 
+/// The words of an engine's text, as the content of a document.
+template <json_value Json>
+[[gnu::noinline]] Json state_content(const std::string& text) {
+    std::istringstream in(text);
+    Json words = Json::array();
+    for (std::string word; in >> word;) {
+        words.push_back(word);
+    }
+    Json content = Json::object();
+    content["state"] = std::move(words);
+    return content;
+}
+
+/// Such words as text.
+template <json_value Json>
+[[gnu::noinline]] std::string state_text(const json_field<Json>& state) {
+    std::string text;
+    for (const json_field<Json>& word : state.list()) {
+        text += std::to_string(word.word()) + " ";
+    }
+    return text;
+}
+
 /// An engine, by the words of its text.
 template <named_engine T>
 struct saved_form<T> {
     template <json_value Json>
     static Json write(const T& x) {
-        Json content = Json::object();
-        content["state"] = words_of<Json>(x);
-        return content;
+        std::ostringstream out;
+        out << x;
+        return state_content<Json>(out.str());
     }
     template <json_value Json>
     static T read(json_fields<Json>& fields) {
         const json_field<Json> state = fields.take("state");
-        std::string text;
-        for (const json_field<Json>& word : state.list()) {
-            text += std::to_string(word.word()) + " ";
-        }
-        std::istringstream in(text);
+        std::istringstream in(state_text(state));
         T engine;
         in >> engine;
-        if (in.fail() || words_of<Json>(engine).size() != state.list().size()) {
+        if (in.fail() || !(in >> std::ws).eof()) {
             state.refuse("must be the words of a state that the engine can be in");
         }
         return engine;
-    }
-
-private:
-    template <json_value Json>
-    static Json words_of(const T& x) {
-        std::ostringstream out;
-        out << x;
-        std::istringstream in(out.str());
-        Json words = Json::array();
-        for (std::string word; in >> word;) {
-            words.push_back(word);
-        }
-        return words;
     }
 };
 
@@ -186,10 +212,10 @@ struct saved_form<T> {
             if constexpr (requires { T::list_name; }) {
                 Json list = Json::array();
                 (list.push_back(to_value<Json>(arguments)), ...);
-                content[T::list_name] = std::move(list);
+                put(content, T::list_name, std::move(list));
             } else if constexpr (requires { T::argument_names; }) {
                 std::size_t i = 0;
-                ((content[T::argument_names[i++]] = to_value<Json>(arguments)), ...);
+                (put(content, T::argument_names[i++], to_value<Json>(arguments)), ...);
             }
         });
         return content;

@@ -4,6 +4,8 @@
 //   word     64 bits of state: decimal text, since many readers round numbers above 2^53
 //   integer  a number up to 2^53 in size, decimal text beyond
 // Anything else is refused with `state_refused`, which names the field.
+//
+// Saving is not worth inlining: much is marked noinline, which keeps compiling cheap.
 
 #ifndef LEAT_STATE_DETAIL_JSON_VALUES_HPP
 #define LEAT_STATE_DETAIL_JSON_VALUES_HPP
@@ -13,6 +15,7 @@
 #include "leat/state/detail/json_checksum.hpp" // json_value
 #include "leat/state/refused.hpp"
 
+#include <bit>
 #include <concepts>
 #include <cstddef>
 #include <cstdint>
@@ -27,7 +30,7 @@ namespace leat::detail {
 inline constexpr std::int64_t largest_json_integer = std::int64_t{1} << 53;
 
 template <json_value Json>
-Json word_to_json(std::uint64_t x) {
+[[gnu::noinline]] Json word_to_json(std::uint64_t x) {
     std::string digits;
     do {
         digits.insert(digits.begin(), static_cast<char>('0' + static_cast<int>(x % 10)));
@@ -37,7 +40,7 @@ Json word_to_json(std::uint64_t x) {
 }
 
 template <json_value Json, std::integral Int>
-Json integer_to_json(Int x) {
+[[gnu::noinline]] Json integer_to_json(Int x) {
     if constexpr (std::signed_integral<Int>) {
         if (x < -largest_json_integer) {
             std::string digits = word_to_json<Json>(0 - static_cast<std::uint64_t>(x));
@@ -53,7 +56,7 @@ Json integer_to_json(Int x) {
 }
 
 template <json_value Json, std::floating_point Real>
-Json real_to_json(Real x) {
+[[gnu::noinline]] Json real_to_json(Real x) {
     if (x > std::numeric_limits<Real>::max()) {
         return "infinity";
     }
@@ -73,21 +76,21 @@ public:
     json_field(const Json& value, std::string where) : value_(&value), where_(std::move(where)) {}
 
     /// A text.
-    [[nodiscard]] std::string_view text() const {
+    [[nodiscard, gnu::noinline]] std::string_view text() const {
         const auto* const text = value_->template get_ptr<const typename Json::string_t*>();
         if (text == nullptr) {
             refuse("must be a text");
         }
         return *text;
     }
-    [[nodiscard]] bool boolean() const {
+    [[nodiscard, gnu::noinline]] bool boolean() const {
         if (!value_->is_boolean()) {
             refuse("must be true or false");
         }
         return value_->template get<bool>();
     }
     /// A word of at most `max`.
-    [[nodiscard]] std::uint64_t word(std::uint64_t max = ~std::uint64_t{0}) const {
+    [[nodiscard, gnu::noinline]] std::uint64_t word(std::uint64_t max = ~std::uint64_t{0}) const {
         std::uint64_t x = 0;
         if (!value_->is_string() || !parse(text(), x) || x > max) {
             message m;
@@ -99,7 +102,7 @@ public:
     }
     /// An integer of type Int.
     template <std::integral Int>
-    [[nodiscard]] Int integer() const {
+    [[nodiscard, gnu::noinline]] Int integer() const {
         std::uint64_t size = 0;
         bool negative = false;
         bool sound = false;
@@ -111,8 +114,9 @@ public:
         } else if (value_->is_number()) {
             const double x = value_->template get<double>();
             constexpr auto largest = static_cast<double>(largest_json_integer);
-            // Another program may have written 2 as 2.0.
-            if (x >= -largest && x <= largest &&
+            constexpr std::uint64_t minus_zero = std::uint64_t{1} << 63;
+            // Another program may have written 2 as 2.0; none writes a whole number as -0.0.
+            if (x >= -largest && x <= largest && std::bit_cast<std::uint64_t>(x) != minus_zero &&
                 static_cast<double>(static_cast<std::int64_t>(x)) == x) {
                 negative = x < 0;
                 size = static_cast<std::uint64_t>(negative ? -x : x);
@@ -131,7 +135,7 @@ public:
     }
     /// A real number that is a Real, which may be infinite.
     template <std::floating_point Real>
-    [[nodiscard]] Real real() const {
+    [[nodiscard, gnu::noinline]] Real real() const {
         if (value_->is_string()) {
             if (text() == "infinity") {
                 return std::numeric_limits<Real>::infinity();
@@ -154,7 +158,7 @@ public:
                      "\"-infinity\"");
     }
     /// A whole number of any size up to 2^1024.
-    [[nodiscard]] wide_integer wide() const {
+    [[nodiscard, gnu::noinline]] wide_integer wide() const {
         const std::string_view digits = value_->is_string() ? text() : std::string_view{};
         bool sound = !digits.empty() && digits.size() <= 308 &&
                      (digits.size() == 1 || digits.front() != '0');
@@ -166,12 +170,8 @@ public:
         }
         return wide_integer{digits};
     }
-    /// The place of something that is not saved.
-    void null() const {
-        if (!value_->is_null()) {
-            refuse("must be null");
-        }
-    }
+    /// Whether it stands for nothing.
+    [[nodiscard]] bool is_null() const { return value_->is_null(); }
     /// A T by its own from_json.
     template <class T>
     [[nodiscard]] T other() const {
@@ -186,7 +186,7 @@ public:
 #endif
     }
     /// The entries of a list.
-    [[nodiscard]] std::vector<json_field> list() const {
+    [[nodiscard, gnu::noinline]] std::vector<json_field> list() const {
         if (!value_->is_array()) {
             refuse("must be a list");
         }
@@ -198,7 +198,7 @@ public:
         return entries;
     }
     /// The entries of a list that has exactly so many.
-    [[nodiscard]] std::vector<json_field> list(std::size_t size) const {
+    [[nodiscard, gnu::noinline]] std::vector<json_field> list(std::size_t size) const {
         if (!value_->is_array() || value_->size() != size) {
             message m;
             refuse(
@@ -207,7 +207,7 @@ public:
         return list();
     }
     /// The members of an object.
-    [[nodiscard]] json_fields<Json> object() const {
+    [[nodiscard, gnu::noinline]] json_fields<Json> object() const {
         if (!value_->is_object()) {
             refuse("must be an object");
         }
@@ -215,7 +215,7 @@ public:
     }
 
     /// "leat::json: WHERE = FOUND, ALLOWED".
-    [[noreturn]] void refuse(const char* allowed) const {
+    [[noreturn, gnu::cold, gnu::noinline]] void refuse(const char* allowed) const {
         message m;
         m.text("leat::json: ").text(where_.data(), where_.size() < 120 ? where_.size() : 120);
         m.text(" = ");
@@ -283,7 +283,7 @@ public:
         : object_(&object), where_(std::move(where)) {}
 
     /// The member of this name, which must be there.
-    json_field<Json> take(std::string_view name) {
+    [[nodiscard, gnu::noinline]] json_field<Json> take(std::string_view name) {
         const auto at = object_->find(std::string(name));
         if (at == object_->end()) {
             refuse_member("has no field \"", name, "\"");
@@ -295,7 +295,7 @@ public:
         return object_->find(std::string(name)) != object_->end();
     }
     /// Refuses members that were not taken.
-    void end() const {
+    [[gnu::noinline]] void end() const {
         if (object_->size() == taken_.size()) {
             return;
         }
@@ -312,8 +312,8 @@ public:
     [[nodiscard]] const std::string& where() const noexcept { return where_; }
 
 private:
-    [[noreturn]] void refuse_member(const char* before, std::string_view name,
-                                    const char* after) const {
+    [[noreturn, gnu::cold, gnu::noinline]] void
+    refuse_member(const char* before, std::string_view name, const char* after) const {
         message m;
         m.text("leat::json: ").text(where_.data(), where_.size() < 120 ? where_.size() : 120);
         m.text(" ").text(before).text(name.data(), name.size() < 40 ? name.size() : 40);

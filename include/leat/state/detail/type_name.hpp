@@ -46,7 +46,10 @@ std::string type_name();
 /// A list of template arguments, as it grows.
 class name_arguments {
 public:
-    void add(const std::string& argument) { text_ += (text_.empty() ? "<" : ", ") + argument; }
+    [[gnu::noinline]] void add(const char* argument) {
+        text_ += text_.empty() ? "<" : ", ";
+        text_ += argument;
+    }
     /// A number type; one of the usual ones is nothing.
     template <class Number>
     void add_number() {
@@ -69,7 +72,11 @@ public:
             add(type_name<T>());
         }
     }
-    [[nodiscard]] std::string text() const { return text_.empty() ? text_ : text_ + ">"; }
+    void add(const std::string& argument) { add(argument.c_str()); }
+    /// The class's name with the list, in angle brackets, if anything is in it.
+    [[nodiscard, gnu::noinline]] std::string after(const char* name) const {
+        return text_.empty() ? name : name + text_ + ">";
+    }
 
 private:
     std::string text_;
@@ -154,13 +161,13 @@ std::string type_name() {
                 arguments.add(parameters::variant_name);
             }
         }
-        return parameters::law_name + arguments.text();
+        return arguments.after(parameters::law_name);
     } else if constexpr (named_engine<T>) {
         engine_arguments<T>::list(arguments);
-        return T::engine_name + arguments.text();
+        return arguments.after(T::engine_name);
     } else {
         class_arguments<T>::list(arguments);
-        return T::class_name + arguments.text();
+        return arguments.after(T::class_name);
     }
 }
 
