@@ -8,6 +8,7 @@
 #include "leat/core/power.hpp"
 #include "leat/core/sine_cosine.hpp"
 #include "leat/core/square_root.hpp"
+#include "leat/testing/detail/tail_areas.hpp"
 #include "leat/uniform/open_interval.hpp"
 #include "leat/uniform/uniform_integer.hpp"
 
@@ -50,6 +51,14 @@ void maths() {
     over("maths.arctangent", 0, 5, [](double x) { return m::arctangent(x, 2); });
     over_all_sizes("maths.square_root", [](double x) { return m::square_root(x); });
     over("maths.log_gamma", 0.1, 100, [](double x) { return m::log_gamma(x); });
+
+    namespace t = leat::testing::detail;
+    over("testing.student_t_beyond", 0, 10, [](double x) { return t::student_t_beyond(x, 30); });
+    over("testing.chi_squared_tails", 0, 30, [](double x) {
+        const t::tail_areas areas = t::chi_squared_tails(x, 9);
+        return std::array<double, 2>{areas.below, areas.above};
+    });
+    over("testing.kolmogorov_beyond", 0.5, 10, [](double x) { return t::kolmogorov_beyond(x, 9); });
 }
 
 } // namespace digests
