@@ -129,6 +129,31 @@ TEST(ExactSum, DoesNotDependOnOrderOrMergingWhereAPlainSumDoes) {
     EXPECT_EQ(known.count(), 1000u);
 }
 
+// All 53 bits set, and at each place within a limb: what a limb can gather is passed many times.
+TEST(ExactSum, CarriesBeforeALimbIsFull) {
+    constexpr std::uint64_t n = 50000;
+    for (int place = 0; place < 32; ++place) {
+        const double x = (1 - 0x1p-53) * static_cast<double>(std::uint64_t{1} << place);
+        exact_sum up;
+        exact_sum down;
+        for (std::uint64_t i = 0; i < n; ++i) {
+            up.add(x);
+            down.add(-x);
+        }
+        exact_sum expected = sum_of(std::vector{x});
+        for (int bit = 14; bit >= 0; --bit) { // n x by doubling
+            expected.merge(expected);
+            if ((n >> bit & 1u) != 0) {
+                expected.add(x);
+            }
+        }
+        ASSERT_EQ(up, expected) << place;
+        ASSERT_EQ(down.value(), -up.value());
+        up.merge(down);
+        ASSERT_EQ(up.value(), 0);
+    }
+}
+
 TEST(ExactSum, MergesItself) {
     exact_sum sum = sum_of(std::vector{1e300, -3.0, 1e-300});
     for (int i = 0; i < 60; ++i) {
