@@ -16,6 +16,7 @@
 #define LEAT_DETAIL_TEXT_OF(x) #x
 #define LEAT_DETAIL_TEXT(x) LEAT_DETAIL_TEXT_OF(x)
 
+/// Everything that leat offers.
 namespace leat {
 
 /// "MAJOR.MINOR.PATCH", to be kept with results.

@@ -29,6 +29,7 @@
 #include <vector>
 
 namespace leat {
+/// Tools for testing code that draws.
 namespace testing {
 
 /// What all test engines share: the word type and its full range.
