@@ -12,7 +12,6 @@
 #include "leat/estimate/running_moments.hpp"
 #include "leat/uniform/open_interval.hpp"
 #include "leat/uniform/permute.hpp"
-#include "leat/uniform/unit.hpp"
 
 #include <array>
 #include <bit>
@@ -68,7 +67,8 @@ void estimate() {
         "estimate.student_factor",
         [](auto& g) {
             const double k = 1 + leat::exponential{0.001}(g);
-            return leat::student_factor(k, leat::unit(g));
+            const double level = leat::uniform{0.001, 1}(g);
+            return leat::student_factor(k, level);
         },
         5000);
     draws(
@@ -87,7 +87,7 @@ void estimate() {
         return [make](auto& g) {
             const std::uint64_t trials = 1 + leat::below(std::uint64_t{10000}, g);
             const std::uint64_t successes = leat::below(trials + 1, g);
-            const double level = leat::unit(g);
+            const double level = leat::uniform{0.001, 1}(g);
             return ends_of(make(successes, trials, level));
         };
     };

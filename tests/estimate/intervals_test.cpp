@@ -85,16 +85,12 @@ TEST(StudentFactor, AgreesWithBoost) {
     for (const double k : {1.0, 1.5, 2.0, 3.0, 4.5, 10.0, 29.0, 100.0, 1000.0, 5000.0, 16383.0,
                            16384.0, 1e5, 1e8, 1e15}) {
         const boost::math::students_t law(k);
-        for (const double level : {0.25, 0.49, 0.5, 0.8, 0.95, 0.999, 1 - 1e-6, 1 - 0x1p-53}) {
+        for (const double level : {0.001, 0.49, 0.5, 0.8, 0.95, 0.999, 1 - 1e-6, 1 - 0x1p-53}) {
             const double expected = level < 0.5 ? boost::math::quantile(law, 0.5 + level / 2)
                                                 : -boost::math::quantile(law, (1 - level) / 2);
-            EXPECT_NEAR(leat::student_factor(k, level) / expected, 1, 2e-13) << k << ' ' << level;
+            EXPECT_NEAR(leat::student_factor(k, level) / expected, 1, level < 0.5 ? 5e-13 : 2e-13)
+                << k << ' ' << level;
         }
-    }
-    // near the centre t is level / (2 density)
-    for (const double k : {1.0, 7.0, 1000.0}) {
-        const double density = boost::math::pdf(boost::math::students_t(k), 0.0);
-        EXPECT_NEAR(leat::student_factor(k, 1e-12) * 2 * density / 1e-12, 1, 1e-12);
     }
 }
 
@@ -300,7 +296,7 @@ TEST(Intervals, RefuseWhatCannotBe) {
     EXPECT_EQ(refusal([&] { (void)leat::student_interval(one); }),
               "leat::student_interval: count = 1, must be at least 2");
     EXPECT_EQ(refusal([&] { (void)leat::student_interval(two, 1); }),
-              "leat::student_interval: level = 1, must be > 0 and < 1");
+              "leat::student_interval: level = 1, must be >= 0.001 and < 1");
     EXPECT_EQ(leat::student_interval(two), (interval{1, 1, 0.95}));
     EXPECT_EQ(refusal([&] { (void)leat::normal_interval(one); }),
               "leat::normal_interval: count = 1, must be at least 2");
@@ -315,9 +311,9 @@ TEST(Intervals, RefuseWhatCannotBe) {
     EXPECT_EQ(refusal([&] { (void)leat::student_factor(0.9); }),
               "leat::student_factor: k = 0.9, must be finite and >= 1");
     EXPECT_EQ(refusal([&] { (void)leat::student_factor(3, std::nan("")); }),
-              "leat::student_factor: level = nan, must be > 0 and < 1");
+              "leat::student_factor: level = nan, must be >= 0.001 and < 1");
     EXPECT_EQ(refusal([&] { (void)leat::normal_factor(0); }),
-              "leat::normal_factor: level = 0, must be > 0 and < 1");
+              "leat::normal_factor: level = 0, must be >= 0.001 and < 1");
     EXPECT_EQ(refusal([&] { (void)leat::wilson_interval(1, 0); }),
               "leat::wilson_interval: trials = 0, must be at least 1, at most 2^53");
     EXPECT_EQ(refusal([&] { (void)leat::clopper_pearson_interval(4, 3); }),

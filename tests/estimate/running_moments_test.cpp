@@ -215,6 +215,7 @@ TEST(RunningMoments, RefuseStatesThatNoValuesLeadTo) {
     refused([](auto& s) { s.count = 1; });
     refused([](auto& s) { s.mean = std::nan(""); });
     refused([](auto& s) { s.second = -1; });
+    refused([](auto& s) { s.second = 0x1p-1000; }); // less than any distance that counts
     refused([](auto& s) { s.third = std::nan(""); });
     refused([](auto& s) { s.fourth = std::numeric_limits<double>::infinity(); });
     refused([](auto& s) { s.min = s.max + 1; });
@@ -407,7 +408,7 @@ TEST(StoppingRule, RefusesWhatAsksForNothing) {
     EXPECT_EQ(refused({.relative = std::nan("")}),
               "leat::stopping_rule: relative = nan, must be >= 0, at most 2^200");
     EXPECT_EQ(refused({.half_width = 1, .level = 1}),
-              "leat::stopping_rule: level = 1, must be > 0 and < 1");
+              "leat::stopping_rule: level = 1, must be >= 0.001 and < 1");
     EXPECT_EQ(refused({.half_width = 1, .at_least = 1}),
               "leat::stopping_rule: at_least = 1, must be at least 2");
     EXPECT_EQ(refused({.half_width = 1, .at_most = 29}),

@@ -1,8 +1,8 @@
 // An interval with the level at which it was made: what every estimate here returns.
 //
 // `level` is the share of repeated studies whose interval covers the true value, where the method's
-// conditions hold; it is no probability about the one interval at hand. Levels lie in (0, 1); 0.95
-// where none is given.
+// conditions hold; it is no probability about the one interval at hand. Levels lie in [0.001, 1);
+// 0.95 where none is given.
 
 #ifndef LEAT_ESTIMATE_INTERVAL_HPP
 #define LEAT_ESTIMATE_INTERVAL_HPP
@@ -33,10 +33,10 @@ struct interval {
 
 namespace detail {
 
-/// level, unless it lies outside (0, 1): that is refused in the caller's name.
+/// level, unless it lies outside [0.001, 1): that is refused in the caller's name.
 constexpr double level_or_refuse(const char* name, double level) {
-    if (!(level > 0 && level < 1)) {
-        refuse(name, "level", level, "must be > 0 and < 1");
+    if (!(level >= 0.001 && level < 1)) {
+        refuse(name, "level", level, "must be >= 0.001 and < 1");
     }
     return level;
 }

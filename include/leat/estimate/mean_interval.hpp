@@ -12,8 +12,8 @@
 // Coverage where values are skewed: too low while n is small. For exponential values the 95 %
 // interval covers 90.1 % at n = 10, 92.8 % at 30, 94.3 % at 100 (measured, 10^5 studies each). For
 // rare events (yes or no) use proportion_interval.hpp.
-// Errors: invalid_parameter for a level outside (0, 1), and for fewer than two values. Where all
-// values are alike the interval has no width: then the sample says nothing about its error.
+// Errors: invalid_parameter for a level outside [0.001, 1), and for fewer than two values. Where
+// all values are alike the interval has no width: then the sample says nothing about its error.
 // Bits: the same everywhere.
 // Sources: "Student", Biometrika 6, 1908; B. L. Welch, Biometrika 34, 1947.
 // Not for values that depend on each other: batch_means.hpp (one long run), paired_differences.hpp

@@ -11,12 +11,10 @@
 // Both work for 0 successes and for none but successes, where the interval of
 // mean +- z sqrt(p (1 - p) / n) has no width.
 // Errors: invalid_parameter for trials of 0 or above 2^53, more successes than trials, or a level
-// outside (0, 1). Bits: the same everywhere. Time: some microseconds for Clopper-Pearson, at any
-// number of trials.
-// Sources: E. B. Wilson, J. Amer. Stat. Assoc. 22, 1927; C. J. Clopper and E. S. Pearson,
-// Biometrika 26, 1934.
-// Not for trials that depend on each other, nor where the number of trials was not fixed in advance
-// (sampling until so many successes have been seen).
+// outside [0.001, 1). Bits: the same everywhere. Time: some microseconds for Clopper-Pearson, at
+// any number of trials. Sources: E. B. Wilson, J. Amer. Stat. Assoc. 22, 1927; C. J. Clopper and E.
+// S. Pearson, Biometrika 26, 1934. Not for trials that depend on each other, nor where the number
+// of trials was not fixed in advance (sampling until so many successes have been seen).
 
 #ifndef LEAT_ESTIMATE_PROPORTION_INTERVAL_HPP
 #define LEAT_ESTIMATE_PROPORTION_INTERVAL_HPP

@@ -142,7 +142,10 @@ public:
     /// How many values were added.
     [[nodiscard]] constexpr std::uint64_t count() const noexcept { return state_.count; }
     /// Their mean.
-    [[nodiscard]] constexpr double mean() const { return need(1), state_.mean; }
+    [[nodiscard]] constexpr double mean() const {
+        need(1);
+        return state_.mean;
+    }
     /// Their variance, by n - 1: unbiased for independent values.
     [[nodiscard]] constexpr double variance() const {
         need(2);
@@ -171,9 +174,15 @@ public:
         return (ratio * static_cast<double>(state_.count) - 3.0).value;
     }
     /// The least value.
-    [[nodiscard]] constexpr double min() const { return need(1), state_.min; }
+    [[nodiscard]] constexpr double min() const {
+        need(1);
+        return state_.min;
+    }
     /// The greatest value.
-    [[nodiscard]] constexpr double max() const { return need(1), state_.max; }
+    [[nodiscard]] constexpr double max() const {
+        need(1);
+        return state_.max;
+    }
 
     /// All there is, to be saved or sent.
     [[nodiscard]] constexpr const moments_state& state() const noexcept { return state_; }
@@ -237,7 +246,7 @@ private:
         if (!(s.mean >= -largest_ && s.mean <= largest_)) {
             return "the state's mean must be at most 2^200 in size";
         }
-        const bool sound = s.second >= 0 && s.second <= 0x1p460 &&
+        const bool sound = (s.second == 0 || s.second >= 0x1p-500) && s.second <= 0x1p460 &&
                            detail::magnitude(s.third) <= 0x1p660 &&
                            detail::magnitude(s.fourth) <= 0x1p860;
         if (!sound) {

@@ -7,7 +7,8 @@
 //
 // Stops at the first count of `at_least` or more where Student's half-width is at most half_width,
 // or at most relative * |mean|, if either is wanted (both: both must hold). It never stops while
-// the values do not vary (rare events not yet seen); it stops at `at_most` whatever the width.
+// the values do not vary (rare events not yet seen); it stops at `at_most` whatever the width. Give
+// at_most with `relative`: a mean near 0 asks for no width at all.
 //
 // The price: such a run stops rather where the variance looks small, so the interval covers less
 // often than its level says. As the wanted width goes to 0 the coverage comes to the level; at a

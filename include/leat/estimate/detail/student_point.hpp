@@ -1,6 +1,6 @@
 // The two-sided point of Student's law: the t with P(|T| < t) = level; the same bits everywhere.
 //
-// Domain: k >= 1 degrees of freedom, which need not be whole; 0 < level < 1.
+// Domain: k >= 1 degrees of freedom, which need not be whole; 0.001 <= level < 1.
 // Method: up to 2^14 degrees Newton's steps on logarithms through the incomplete beta function,
 // beyond the expansion about the normal point (M. Abramowitz and I. A. Stegun, Handbook of
 // Mathematical Functions, 26.7.5), whose first term left out is there below 1e-15. Error, measured
