@@ -47,13 +47,16 @@ BEGIN {
          "From a seed sequence, which is never refused.")
     same("constexpr explicit [a-z_0-9]+[(]const (param_type|[a-z_]+_parameters<.*>)& p[)]",
          "From parameters; what they must not be is refused.")
-    same("constexpr (explicit )?[a-z_0-9]+[(](detail::number|std::vector<)",
+    same("constexpr (explicit )?[a-z_0-9]+[(]detail::number",
          "From the arguments in this order, numbers of any type; what they must not be is refused.")
+    same("constexpr (explicit )?[a-z_0-9]+[(]std::vector<",
+         "From the arguments in this order; what they must not be is refused.")
     same("constexpr .* param[(][)] const", "The parameters.")
     same("constexpr .* mean[(][)] const", "The mean.")
     same("constexpr .* variance[(][)] const", "The variance.")
     same("constexpr .* measure[(][)] const", "The length, area or volume.")
     same("constexpr .* bounds[(][)] const", "The box around the region.")
+    same("constexpr .* limit[(][)] const", "The position up to which words may be drawn.")
     same("constexpr .* position[(][)] const", "How many words have been drawn.")
     same("[a-z_]+[(].*[)] ?-> ?[a-z_]+<", "How the template's arguments are deduced.")
     same("static constexpr .* standard_density[(]", "The density at location 0 and scale 1.")
@@ -62,8 +65,8 @@ BEGIN {
     same("static constexpr double standard_quantile[(]",
          "The value that a draw is at most with chance p, at location 0 and scale 1.")
     same("friend .*bool operator==[(]", "Whether the two have equal state or parameters.")
-    same("friend .*operator<<[(]", "Writes the text form: words separated by one space.")
-    same("friend .*operator>>[(]",
+    same("friend std::basic_ostream.*operator<<[(]", "Writes the text form: words separated by one space.")
+    same("friend std::basic_istream.*operator>>[(]",
          "Reads the text form; anything else sets failbit and leaves the object as it was.")
 }
 

@@ -165,6 +165,7 @@ public:
         }
         return product;
     }
+    /// Times 2^k; refused from 2^1024 on.
     friend constexpr wide_integer operator<<(const wide_integer& a, unsigned k) {
         if (a == wide_integer{}) {
             return a;
@@ -184,6 +185,7 @@ public:
         }
         return r;
     }
+    /// Divided by 2^k, rounded down.
     friend constexpr wide_integer operator>>(const wide_integer& a, unsigned k) noexcept {
         wide_integer r;
         const std::size_t whole = k / 32;
