@@ -13,6 +13,7 @@ set(below_bulk ${samplers})
 foreach(top sequences estimate evidence state compat testing self_check)
     set(below_${top} ${samplers} bulk)
 endforeach()
+list(APPEND below_testing estimate) # a check of a mean is an estimate, judged
 list(APPEND below_self_check compat estimate) # its digests cover historical engines and estimates
 
 # The area of a header: its folder, or for an umbrella (leat/<area>.hpp) its name.

@@ -25,6 +25,16 @@
 
 namespace leat {
 namespace testing {
+namespace detail {
+
+/// A test framework's own result: made from a bool, and takes text.
+template <class Result>
+concept framework_result = !std::is_arithmetic_v<Result> && std::constructible_from<Result, bool> &&
+                           requires(Result & r, const std::string& text) {
+    { r << text } -> std::same_as<Result&>;
+};
+
+} // namespace detail
 
 /// The outcome of a check.
 struct agreement {
@@ -39,17 +49,14 @@ struct agreement {
     explicit operator bool() const noexcept { return agrees; }
 
     /// The same as a test framework's result, with the message.
-    template <class Result>
-    requires std::constructible_from<Result, bool> &&
-        (!std::is_arithmetic_v<Result>)&&requires(Result& r, const std::string& text) {
-        { r << text } -> std::same_as<Result&>;
-    }
+    template <detail::framework_result Result>
     operator Result() const {
         Result r(agrees);
         r << message;
         return r;
     }
 
+    /// Writes the message.
     template <class Traits>
     friend std::basic_ostream<char, Traits>& operator<<(std::basic_ostream<char, Traits>& os,
                                                         const agreement& a) {

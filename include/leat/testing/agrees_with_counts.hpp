@@ -7,12 +7,15 @@
 // its own. A cell that expects 0 must count 0.
 //
 // Both sides count: counts that fit too well, as from a grid in place of random points, do not
-// agree either. So stratified or antithetic samples are not for this check. Assumes independent
-// samples and cells chosen without looking at them. The chi-square law is an approximation:
-// neighbouring cells are joined until each expects at least max(5, z^6 / 36), z being the normal
-// quantile of the alarm rate (8 at 0.01, 35 at 0.001, 380 at 1e-6, 2000 at 1e-10). Then the rate is
-// right within a factor of e even where all of the deviation is in one cell; it is nearer where it
-// is spread. The message says how many cells are left.
+// agree either. So stratified or antithetic samples are not for this check. (Counts are whole
+// numbers, and few cells may fit perfectly by chance: the lower side is the area below the
+// statistic of counts half a unit farther out.)
+//
+// Assumes independent samples and cells chosen without looking at them. The chi-square law is an
+// approximation: neighbouring cells are joined until each expects at least max(5, z^6 / 36), z
+// being the normal quantile of the alarm rate (8 at 0.01, 35 at 0.001, 380 at 1e-6, 2000 at 1e-10).
+// Then the rate is right within a factor of e even where all of the deviation is in one cell; it is
+// nearer where it is spread. The message says how many cells are left.
 //
 // Errors: invalid_parameter for lists of different lengths, negative entries, an alarm rate outside
 // (0, 1), or fewer than two cells left after joining: draw more samples.

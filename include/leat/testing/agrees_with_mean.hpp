@@ -14,22 +14,26 @@
 // - agrees_with_mean: a finite variance, and enough samples for a nearly normal mean. Skew samples
 //   need more: the leading error of the alarm rate is a factor e^h on one side, with h = |skewness|
 //   z^3 / (3 sqrt(n)) and z the normal quantile of the rate. Where h, from the samples' own
-//   skewness, is above 1, the message says so. Of heavy tails (an infinite third moment) a sample
-//   shows too little: there the rate is not to be trusted; test a bounded function of the samples,
-//   or agrees_with_distribution.
+//   skewness, is above 1, the message says so, and also where all samples are alike, as rare hits
+//   and misses may be: nothing is known of their spread then. Of heavy tails (an infinite third
+//   moment) a sample shows too little: there the rate is not to be trusted; test a bounded function
+//   of the samples, or agrees_with_distribution.
 // - agrees_with_bounded_mean: nothing more.
-// - agrees_with_mean_within: as agrees_with_mean, but it looks only where h is at most 1. If the
-//   mean is as expected, it fails with a chance of at most the alarm rate; if it is off by the
-//   tolerance or more, it passes with a chance of at most that. In between both may happen. Looks
-//   come at 1000, 2000, 4000, ... draws, and the i-th spends 2^-i of the rate, since looking again
-//   and again at one level would raise it. Undecided at `most_draws`, it fails and says so.
+// - agrees_with_mean_within: as agrees_with_mean, but it looks only where h is at most 1 and the
+//   samples are not all alike. If the mean is as expected, it fails with a chance of at most the
+//   alarm rate; if it is off by the tolerance or more, it passes with a chance of at most that. In
+//   between both may happen. Looks come at 1000, 2000, 4000, ... draws, and the i-th spends 2^-i of
+//   the rate, since looking again and again at one level would raise it. Undecided at `most_draws`,
+//   it fails and says so.
 //
-// Errors: invalid_parameter for fewer than two samples, an alarm rate outside (0, 1), a mean that
-// is not finite or outside [lo, hi], a tolerance that is not positive. Samples that are not finite,
-// or outside [lo, hi], do not agree. Sources: "Student", Biometrika 6, 1908; P. Hall, The Bootstrap
-// and Edgeworth Expansion, 1992, 2.6 (skewness); W. Hoeffding, JASA 58, 1963, eq. (2.1) (bounded);
-// P. Armitage, C. K. McPherson and B. C. Rowe, JRSS A 132, 1969 (repeated looks); K. K. G. Lan and
-// D. L. DeMets, Biometrika 70, 1983 (spending the rate).
+// Errors: invalid_parameter for fewer than two samples, an alarm rate outside (0, 1), a mean
+// outside [lo, hi], a tolerance that is not positive, numbers above 2^200 in size or NaN. Samples
+// that are so, or outside [lo, hi], do not agree.
+//
+// Sources: "Student", Biometrika 6, 1908; P. Hall, The Bootstrap and Edgeworth Expansion, 1992, 2.6
+// (skewness); W. Hoeffding, JASA 58, 1963, eq. (2.1) (bounded); P. Armitage, C. K. McPherson and B.
+// C. Rowe, JRSS A 132, 1969 (repeated looks); K. K. G. Lan and D. L. DeMets, Biometrika 70, 1983
+// (spending the rate).
 
 #ifndef LEAT_TESTING_AGREES_WITH_MEAN_HPP
 #define LEAT_TESTING_AGREES_WITH_MEAN_HPP
@@ -40,8 +44,8 @@
 #include "leat/core/exponential.hpp"
 #include "leat/core/normal_quantile.hpp"
 #include "leat/distributions/detail/discrete_deviance.hpp"
+#include "leat/estimate/running_moments.hpp"
 #include "leat/testing/agreement.hpp"
-#include "leat/testing/detail/sample_moments.hpp"
 #include "leat/testing/detail/tail_areas.hpp"
 
 #include <concepts>
@@ -54,9 +58,34 @@ namespace detail {
 
 using leat::detail::magnitude;
 
-inline void refuse_unless_finite(const char* check, const char* parameter, double x) {
-    if (!leat::detail::finite(x)) {
-        leat::detail::refuse(check, parameter, x, "must be finite");
+/// Whether running moments take x.
+constexpr bool moderate(double x) noexcept { return magnitude(x) <= 0x1p200; }
+
+/// Running moments that remember a value they cannot take, in place of an error.
+class sample_moments : public running_moments {
+public:
+    static constexpr std::uint64_t none = ~std::uint64_t{0};
+
+    void add(double x) {
+        if (first_bad_ != none) {
+            return;
+        }
+        if (moderate(x)) {
+            running_moments::add(x);
+        } else {
+            first_bad_ = count();
+        }
+    }
+    /// Which value was the first that is not moderate, or `none`; later ones are not looked at.
+    [[nodiscard]] std::uint64_t first_bad() const noexcept { return first_bad_; }
+
+private:
+    std::uint64_t first_bad_ = none;
+};
+
+inline void refuse_unless_moderate(const char* check, const char* parameter, double x) {
+    if (!moderate(x)) {
+        leat::detail::refuse(check, parameter, x, "must be at most 2^200 in size");
     }
 }
 
@@ -82,16 +111,15 @@ inline double p_of_mean(const sample_moments& m, double mean) {
     return student_t_beyond(t_statistic(m, mean), static_cast<double>(m.count()) - 1);
 }
 
-/// A disagreement because of one sample.
-inline agreement spoilt(const char* check, std::uint64_t samples, double alarm_rate,
-                        std::uint64_t which, const char* why) {
+/// A disagreement because of one sample, the last that was looked at.
+inline agreement spoilt(const char* check, double alarm_rate, std::uint64_t which,
+                        const char* why) {
     message what;
     what.text("sample ").value(which).text(" (counted from 0) ").text(why);
-    return judged(
-        check,
-        {.statistic = 0, .p = 0, .alarm_rate = alarm_rate, .samples = samples, .message = {}},
-        what);
+    return judged(check, {.alarm_rate = alarm_rate, .samples = which + 1, .message = {}}, what);
 }
+
+inline constexpr const char* too_large = "is not at most 2^200 in size";
 
 inline message& describe_mean(message& m, const sample_moments& found, double expected) {
     rounded(m.text("mean "), found.mean());
@@ -101,17 +129,19 @@ inline message& describe_mean(message& m, const sample_moments& found, double ex
 inline agreement judge_mean(const sample_moments& m, double expected, double alarm_rate) {
     constexpr const char* check = "agrees_with_mean";
     alarm_rate_or_refuse(check, alarm_rate);
-    refuse_unless_finite(check, "expected_mean", expected);
+    refuse_unless_moderate(check, "expected_mean", expected);
+    if (m.first_bad() != m.none) {
+        return spoilt(check, alarm_rate, m.first_bad(), too_large);
+    }
     if (m.count() < 2) {
         leat::detail::refuse(check, "samples", m.count(), "must be at least 2");
-    }
-    if (m.first_bad() != m.none) {
-        return spoilt(check, m.count(), alarm_rate, m.first_bad(), "is not finite");
     }
     const double t = t_statistic(m, expected);
     message what;
     rounded(describe_mean(what, m, expected).text(", t = "), t);
-    if (skewness_strain(m, alarm_rate) > 1) {
+    if (m.standard_error() == 0) {
+        what.text(" (BEWARE: all samples are alike, so that nothing is known of their spread)");
+    } else if (skewness_strain(m, alarm_rate) > 1) {
         rounded(what.text(" (BEWARE: skewness "), m.skewness());
         what.text(" is too much for so few samples, the alarm rate does not hold)");
     }
@@ -159,8 +189,8 @@ template <detail::number_list Samples>
     using real = leat::detail::strict<double>;
     constexpr const char* check = "agrees_with_bounded_mean";
     detail::alarm_rate_or_refuse(check, alarm_rate);
-    detail::refuse_unless_finite(check, "lo", lo);
-    detail::refuse_unless_finite(check, "hi", hi);
+    detail::refuse_unless_moderate(check, "lo", lo);
+    detail::refuse_unless_moderate(check, "hi", hi);
     if (!(lo < hi)) {
         leat::detail::refuse(check, "hi", hi, "must be > lo");
     }
@@ -176,11 +206,11 @@ template <detail::number_list Samples>
         }
         m.add(x);
     }
+    if (outside != m.none) {
+        return detail::spoilt(check, alarm_rate, outside, "is outside lo to hi");
+    }
     if (m.count() < 2) {
         leat::detail::refuse(check, "samples", m.count(), "must be at least 2");
-    }
-    if (outside != m.none) {
-        return detail::spoilt(check, m.count(), alarm_rate, outside, "is outside lo to hi");
     }
     const real width = real(hi) - lo;
     const real found = (real(m.mean()) - lo) / width;
@@ -207,9 +237,9 @@ template <std::invocable Draw>
     constexpr const char* check = "agrees_with_mean_within";
     constexpr std::uint64_t first_look = 1000;
     detail::alarm_rate_or_refuse(check, alarm_rate);
-    detail::refuse_unless_finite(check, "expected_mean", expected_mean);
-    if (!(tolerance > 0) || !leat::detail::finite(tolerance)) {
-        leat::detail::refuse(check, "tolerance", tolerance, "must be finite and > 0");
+    detail::refuse_unless_moderate(check, "expected_mean", expected_mean);
+    if (!(tolerance > 0) || !detail::moderate(tolerance)) {
+        leat::detail::refuse(check, "tolerance", tolerance, "must be > 0 and at most 2^200");
     }
     if (most_draws < first_look) {
         leat::detail::refuse(check, "most_draws", most_draws, "must be at least 1000");
@@ -224,12 +254,12 @@ template <std::invocable Draw>
         }
         found.samples = m.count();
         if (m.first_bad() != m.none) {
-            return detail::spoilt(check, m.count(), alarm_rate, m.first_bad(), "is not finite");
+            return detail::spoilt(check, alarm_rate, m.first_bad(), detail::too_large);
         }
         share = (real(share) * 0.5).value;
         found.statistic = detail::t_statistic(m, expected_mean);
         found.p = detail::p_of_mean(m, expected_mean);
-        if (detail::skewness_strain(m, share) <= 1) {
+        if (m.standard_error() > 0 && detail::skewness_strain(m, share) <= 1) {
             const double low = (real(expected_mean) - tolerance).value;
             const double high = (real(expected_mean) + tolerance).value;
             if (found.p < share) {
