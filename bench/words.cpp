@@ -7,6 +7,7 @@
 #include "leat/engines/lehmer128.hpp"
 #include "leat/engines/multiply_with_carry.hpp"
 #include "leat/engines/philox.hpp"
+#include "leat/streams/ledger.hpp"
 
 #include <cstdlib>
 #include <cstring>
@@ -57,6 +58,13 @@ const bool registered = [] {
     add_words("thin_stream", [] { return leat::source{20261201}.thin_stream("bench"); });
     add_words("xoshiro256++", xoshiro);
     add_loop<word>("words/stream, one by one", stream, next);
+    add_loop<word>(
+        "words/stream in a ledger, one by one",
+        [] {
+            static leat::ledger book;
+            return leat::source{20261201, book}.stream("bench");
+        },
+        next);
     add_loop<word>("words/braid, one by one", braid, next);
     add_loop<word>("words/xoshiro256++, one by one", xoshiro, next);
     add_loop<word>(

@@ -43,7 +43,6 @@
 #include <cstddef>
 #include <cstdint>
 #include <deque> // entries stay where they are
-#include <map>
 #include <mutex>
 #include <span>
 #include <string>
@@ -291,7 +290,7 @@ private:
     repeats policy_;
     mutable std::mutex mutex_; // guards all below, not what entries hold
     std::deque<entry> entries_;
-    std::map<std::string, branch_record> branches_;
+    std::unordered_map<std::string, branch_record> branches_;
     std::unordered_map<identity, const entry*, identity_hash> first_;
     std::vector<std::pair<const entry*, const entry*>> repeated_;
     std::vector<std::string> sources_;
