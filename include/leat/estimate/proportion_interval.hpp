@@ -1,20 +1,22 @@
 // Confidence intervals for a proportion: so many successes in so many independent trials.
 //
-//   leat::wilson_interval(3, 1000)            0.0010 to 0.0088
-//   leat::clopper_pearson_interval(3, 1000)   0.0006 to 0.0087
+//   leat::wilson_interval(3, 1000)            0.0010 to 0.0088: covers its level on average over
+//                                             proportions; short; the usual choice
+//   leat::clopper_pearson_interval(3, 1000)   0.0006 to 0.0087: covers at least its level, whatever
+//                                             the proportion; for where falling short is worse than
+//                                             being wide
 //
-//   wilson_interval            covers the level on average over proportions; short; the usual
-//   choice clopper_pearson_interval   covers at least the level, whatever the proportion; wider:
-//   where
-//                              falling short is worse than being wide, as with rare failures
+// Both work for 0 successes and for none but successes, where mean +- z sqrt(p (1 - p) / n) has no
+// width.
 //
-// Both work for 0 successes and for none but successes, where the interval of
-// mean +- z sqrt(p (1 - p) / n) has no width.
 // Errors: invalid_parameter for trials of 0 or above 2^53, more successes than trials, or a level
-// outside [0.001, 1). Bits: the same everywhere. Time: some microseconds for Clopper-Pearson, at
-// any number of trials. Sources: E. B. Wilson, J. Amer. Stat. Assoc. 22, 1927; C. J. Clopper and E.
-// S. Pearson, Biometrika 26, 1934. Not for trials that depend on each other, nor where the number
-// of trials was not fixed in advance (sampling until so many successes have been seen).
+// outside [0.001, 1).
+// Bits: the same everywhere.
+// Time: some microseconds for Clopper-Pearson, some milliseconds where trials pass 10^12.
+// Sources: E. B. Wilson, J. Amer. Stat. Assoc. 22, 1927; C. J. Clopper and E. S. Pearson,
+// Biometrika 26, 1934.
+// Not for trials that depend on each other, nor where the number of trials was not fixed in advance
+// (sampling until so many successes have been seen).
 
 #ifndef LEAT_ESTIMATE_PROPORTION_INTERVAL_HPP
 #define LEAT_ESTIMATE_PROPORTION_INTERVAL_HPP

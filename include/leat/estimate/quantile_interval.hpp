@@ -9,12 +9,14 @@
 // Coverage: at least the level, for independent values of any law, continuous or not; each end
 // misses with a chance of at most half of what the level leaves. The true coverage, `coverage`, is
 // the binomial law's, so it jumps from sample size to sample size.
-// Errors: invalid_parameter for p outside (0, 1) or level outside [0.001, 1), for values that are
+//
+// Errors: invalid_parameter for p outside (0, 1) or a level outside [0.001, 1), for values that are
 // NaN or not in ascending order, and for a sample too small: its extremes bound the quantile only
 // where p^n and (1 - p)^n are at most (1 - level) / 2. For p = 0.9 and 95 % that takes 36 values,
-// for p = 0.99 368. Bits: the same everywhere. Source: H. A. David and H. N. Nagaraja, Order
-// Statistics, 3rd ed., 2003, 7.1 (W. R. Thompson, Ann. Math. Stat. 7, 1936). Not for values of one
-// long run, which depend on each other.
+// for p = 0.99 it takes 368.
+// Bits: the same everywhere.
+// Source: H. A. David and H. N. Nagaraja, Order Statistics, 3rd ed., 2003, 7.1 (W. R. Thompson,
+// Ann. Math. Stat. 7, 1936). Not for values of one long run, which depend on each other.
 
 #ifndef LEAT_ESTIMATE_QUANTILE_INTERVAL_HPP
 #define LEAT_ESTIMATE_QUANTILE_INTERVAL_HPP

@@ -10,7 +10,6 @@
 #define LEAT_ESTIMATE_DETAIL_STUDENT_POINT_HPP
 
 #include "leat/core/barrier.hpp"
-#include "leat/core/error_free.hpp" // magnitude
 #include "leat/core/exponential.hpp"
 #include "leat/core/scaled.hpp"
 #include "leat/estimate/detail/incomplete_beta.hpp"
@@ -47,10 +46,10 @@ constexpr double student_point(double k, double level) noexcept {
         const beta_shares shares =
             beta_shares_at(0.5, (real(k) * 0.5).value, (odds * outer).value, outer.value);
         const scaled rise = shares.kernel * scaled{1.0, 1}; // d P(|T| < t) / d ln t
-        const double step = by_centre ? newton_log_step(shares.below, wanted, rise)
-                                      : -newton_log_step(shares.above, wanted, rise);
-        t = (real(t) * natural_exp(step)).value;
-        if (magnitude(step) < 0x1p-27) { // what is left is of the order of its square
+        const log_step newton =
+            newton_log_step(by_centre ? shares.below : shares.above, wanted, rise);
+        t = (real(t) * natural_exp(by_centre ? newton.step : -newton.step)).value;
+        if (newton.settled) {
             break;
         }
     }
