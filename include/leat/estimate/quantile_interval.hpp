@@ -16,7 +16,8 @@
 // for p = 0.99 it takes 368.
 // Bits: the same everywhere.
 // Source: H. A. David and H. N. Nagaraja, Order Statistics, 3rd ed., 2003, 7.1 (W. R. Thompson,
-// Ann. Math. Stat. 7, 1936). Not for values of one long run, which depend on each other.
+// Ann. Math. Stat. 7, 1936).
+// Not for values of one long run, which depend on each other.
 
 #ifndef LEAT_ESTIMATE_QUANTILE_INTERVAL_HPP
 #define LEAT_ESTIMATE_QUANTILE_INTERVAL_HPP

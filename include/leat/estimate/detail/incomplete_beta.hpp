@@ -5,9 +5,10 @@
 // Method: on the side of the mean the continued fraction of A. R. DiDonato and A. H. Morris,
 // Algorithm 708, ACM TOMS 18, 1992 (from memory, pinned by the measurement), in which nothing
 // cancels, evaluated forward (W. J. Lentz, Appl. Opt. 15, 1976), times the density in deviance
-// form. Near the mean it takes some sqrt(a + b) terms, elsewhere few. Points by Newton's steps on
-// logarithms. Error of the smaller share, measured against Boost.Math in tests/estimate: 3e-13
-// relative for a + b up to 2e6.
+// form. Near the mean it takes some sqrt(a + b) terms, elsewhere few.
+// Points by Newton's steps on logarithms.
+// Error of the smaller share, measured against Boost.Math in tests/estimate: 3e-13 relative for
+// a + b up to 2e6.
 
 #ifndef LEAT_ESTIMATE_DETAIL_INCOMPLETE_BETA_HPP
 #define LEAT_ESTIMATE_DETAIL_INCOMPLETE_BETA_HPP
