@@ -4,7 +4,7 @@
 #include <unistd.h> // write, fsync
 
 #include <cerrno>
-#include <cstdio> // rename
+#include <cstdio> // rename, remove
 #include <filesystem>
 #include <fstream>
 #include <stdexcept>
@@ -52,8 +52,10 @@ void replace(const std::string& file, const std::string& text, bool onto_disk) {
         return target.is_open() && target.put(text) && (!onto_disk || target.onto_disk());
     }();
     if (!written || std::rename(part.c_str(), file.c_str()) != 0) {
+        const int why = errno;
+        std::remove(part.c_str()); // a full disk needs the space
         throw std::runtime_error("cannot write " + file + ": " +
-                                 std::generic_category().message(errno));
+                                 std::generic_category().message(why));
     }
 }
 

@@ -3,6 +3,7 @@
 
 find_package(OpenMP QUIET COMPONENTS CXX)
 find_package(TBB QUIET CONFIG)
+set(MPI_CXX_SKIP_MPICXX ON) # the C interface alone
 find_package(MPI QUIET COMPONENTS CXX)
 
 option(LEAT_EXAMPLES_WITH_OPENMP "Build the study's driver for OpenMP" "${OpenMP_CXX_FOUND}")

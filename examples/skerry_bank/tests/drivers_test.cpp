@@ -66,31 +66,51 @@ TEST(skerry_bank_drivers, run_each_missing_replication_once) {
     }
 }
 
-// "work dealt out dynamically, not by equal shares": the first half of the replications wait until
-// two threads have taken some of them. By equal shares one thread would have the whole half.
-TEST(skerry_bank_drivers, an_idle_thread_takes_over) {
-    const auto patience = std::chrono::seconds(20);
-    for (const thread_driver& driver : built_drivers()) {
-        std::mutex mutex;
-        std::condition_variable joined;
-        std::set<std::thread::id> threads_in_first_half;
-        bool waited_in_vain = false;
-        collector rows(row_set(64), {});
-        driver.run(
-            [&](int r) {
-                if (r < 32) {
-                    std::unique_lock lock(mutex);
-                    threads_in_first_half.insert(std::this_thread::get_id());
-                    joined.notify_all();
-                    waited_in_vain = waited_in_vain || !joined.wait_for(lock, patience, [&] {
-                        return threads_in_first_half.size() >= 2 || waited_in_vain;
-                    });
-                }
-                return row_of(r);
-            },
-            rows, 2);
-        EXPECT_FALSE(waited_in_vain) << driver.name;
+/// Whether an idle thread takes over from a busy one: the first half of the replications wait until
+/// two threads have begun some of them.
+bool takes_over(const thread_driver& driver, std::chrono::milliseconds patience) {
+    std::mutex mutex;
+    std::condition_variable changed;
+    std::set<std::thread::id> in_first_half;
+    bool in_vain = false;
+    collector rows(row_set(64), {});
+    driver.run(
+        [&](int r) {
+            if (r < 32) {
+                std::unique_lock lock(mutex);
+                in_first_half.insert(std::this_thread::get_id());
+                changed.notify_all();
+                const bool met = changed.wait_for(
+                    lock, patience, [&] { return in_first_half.size() >= 2 || in_vain; });
+                in_vain = in_vain || !met;
+            }
+            return row_of(r);
+        },
+        rows, 2);
+    return !in_vain;
+}
+
+/// A planted fault: each thread has its share from the start.
+void run_by_equal_shares(const skerry::replication_function& run, collector& rows, int threads) {
+    const std::vector<int> tasks = rows.missing();
+    const std::size_t share = tasks.size() / static_cast<std::size_t>(threads);
+    std::vector<std::jthread> workers;
+    for (std::size_t w = 0; w < static_cast<std::size_t>(threads); ++w) {
+        workers.emplace_back([&, w] {
+            for (std::size_t i = w * share; i < (w + 1) * share; ++i) {
+                skerry::attempt(run, rows, tasks[i]);
+            }
+        });
     }
+}
+
+// "work dealt out dynamically, not by equal shares"
+TEST(skerry_bank_drivers, let_an_idle_thread_take_over) {
+    for (const thread_driver& driver : built_drivers()) {
+        EXPECT_TRUE(takes_over(driver, std::chrono::seconds(20))) << driver.name;
+    }
+    EXPECT_FALSE(
+        takes_over({"equal shares", run_by_equal_shares, ""}, std::chrono::milliseconds(100)));
 }
 
 TEST(skerry_bank_drivers, report_the_lowest_failure_whoever_was_first) {
