@@ -50,6 +50,8 @@ cost '"leat/streams/source.hpp"'
 cost '"leat/streams/source.hpp"' '"leat/distributions/normal.hpp"'
 cost '"leat/bulk/fill.hpp"'
 cost '"leat/leat.hpp"'
+cost "<nlohmann/json.hpp>"
+cost '"leat/state/json.hpp"'
 echo
 
 # The bytes of code and constants of a program.

@@ -4,6 +4,7 @@
 #include "leat/distributions/exponential.hpp"
 #include "leat/distributions/normal.hpp"
 #include "leat/distributions/weighted_index.hpp"
+#include "leat/engines/lehmer.hpp"
 #include "leat/engines/shuffled.hpp"
 #include "leat/engines/xoshiro.hpp"
 #include "leat/regions/disk.hpp"
@@ -79,7 +80,7 @@ struct buoy {
         harbour.update(port, 0.5 + harbour.weight(port) * 0.75);
         const auto [east, north] = place(block);
         x += 0.001 * step(noise);
-        trace ^= old() + leat::below(1000003, visits);
+        trace ^= old() + leat::below(1000003u, visits);
         for (const double real : {time, x, east, north, static_cast<double>(port)}) {
             trace = std::rotl(trace * 0x9e3779b97f4a7c15u, 23) ^ std::bit_cast<std::uint64_t>(real);
         }

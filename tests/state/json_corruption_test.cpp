@@ -7,18 +7,15 @@
 
 #include "leat/distributions/categorical.hpp"
 #include "leat/distributions/multivariate_normal.hpp"
-#include "leat/distributions/negative_binomial.hpp"
 #include "leat/distributions/normal.hpp"
 #include "leat/distributions/truncated_normal.hpp"
 #include "leat/distributions/zipf.hpp"
 #include "leat/engines/lehmer.hpp"
 #include "leat/engines/multiply_with_carry.hpp"
-#include "leat/engines/philox.hpp"
 #include "leat/engines/shuffled.hpp"
 #include "leat/engines/xorshift.hpp"
 #include "leat/regions/box.hpp"
 #include "leat/regions/combination.hpp"
-#include "leat/regions/cone.hpp"
 #include "leat/regions/disk.hpp"
 #include "leat/regions/polygon.hpp"
 #include "leat/regions/simplex.hpp"
@@ -26,7 +23,6 @@
 #include "leat/state/json.hpp"
 #include "leat/streams/source.hpp"
 #include "leat/streams/split.hpp"
-#include "leat/uniform/open_interval.hpp"
 #include "leat/uniform/permute.hpp"
 #include "leat/uniform/uniform_integer.hpp"
 
@@ -35,7 +31,6 @@
 #include <array>
 #include <cstdint>
 #include <cstdio>
-#include <functional>
 #include <iterator>
 #include <limits>
 #include <memory>
@@ -51,63 +46,68 @@ using nlohmann::json;
 /// What reading a damaged document came to.
 enum class ending { refused, exact, another, target_changed, other_exception };
 
-/// An object's document, and how it is read into a target that holds another object. The reading
-/// tells what came of it, exact being what `wanted` says.
+/// A document, and a target that holds another object of its type, without the type.
 struct saved_object {
     json document;
-    std::function<ending(const json& read, const json& wanted)> restore;
+    json before; // what the target holds
+    std::shared_ptr<void> target;
+    void (*read)(const json& from, void* target);
+    json (*save)(const void* target);
+
+    /// What comes of reading a document into the target, exact being what `wanted` says.
+    [[nodiscard]] ending restore(const json& damaged, const json& wanted) const {
+        try {
+            read(damaged, target.get());
+        } catch (const leat::state_refused&) {
+            return save(target.get()) == before ? ending::refused : ending::target_changed;
+        } catch (...) {
+            return ending::other_exception;
+        }
+        // By value: 2 may be written for 2.0. To the bit all the same, by the checksum.
+        const bool exact = save(target.get()) == wanted;
+        read(before, target.get());
+        return exact ? ending::exact : ending::another;
+    }
 };
 
 template <class T>
 saved_object object(const T& x, T other) {
-    const auto target = std::make_shared<T>(std::move(other));
-    const json before = *target;
-    return {x, [target, before](const json& read, const json& wanted) {
-                try {
-                    read.get_to(*target);
-                } catch (const leat::state_refused&) {
-                    return json(*target) == before ? ending::refused : ending::target_changed;
-                } catch (...) {
-                    return ending::other_exception;
-                }
-                // By value: 2 may be written for 2.0. To the bit all the same, by the checksum.
-                const bool exact = json(*target) == wanted;
-                *target = before.get<T>();
-                return exact ? ending::exact : ending::another;
-            }};
+    saved_object one;
+    one.read = [](const json& from, void* target) { from_json(from, *static_cast<T*>(target)); };
+    one.save = [](const void* target) {
+        json saved;
+        to_json(saved, *static_cast<const T*>(target));
+        return saved;
+    };
+    one.document = one.save(&x);
+    one.before = one.save(&other);
+    one.target = std::make_shared<T>(std::move(other));
+    return one;
 }
 
+/// At least one of every form that a document has.
 std::vector<saved_object> objects() {
     std::vector<saved_object> all;
     all.push_back(object(leat::xorshift32{7}, leat::xorshift32{8}));
     all.push_back(object(leat::mwc_lag4_32{7}, leat::mwc_lag4_32{8}));
-    all.push_back(object(leat::philox4x32{7}, leat::philox4x32{8}));
     using shuffled = leat::shuffled<leat::minimal_standard, 8>;
     all.push_back(object(shuffled{7}, shuffled{8}));
-    const auto block = [](int i) { return leat::block(leat::xorshift64{7}, i, 1000); };
+    const auto block = [](int i) { return leat::block(leat::xorshift32{7}, i, 1000); };
     all.push_back(object(block(3), block(4)));
     const leat::source study{7};
     all.push_back(object(study, study.branch("a", 3)));
     all.push_back(object(study.stream("x", 1), study.stream(2)));
-    all.push_back(object(study.thin_stream("x", 1), study.thin_stream(2)));
     all.push_back(object(study.stream(1).address(), study.stream(2).address()));
-    all.push_back(object(leat::normal{0.1, 0.7}, leat::normal{3, 4}));
     all.push_back(object(leat::normal<float>{0.5F, 2}, leat::normal<float>{3, 4}));
     constexpr double infinity = std::numeric_limits<double>::infinity();
-    all.push_back(object(leat::truncated_normal{0, 1, 2, infinity},
+    all.push_back(object(leat::truncated_normal{0.1, 0.7, 2, infinity},
                          leat::truncated_normal{0, 1, -infinity, 0}));
     all.push_back(object(leat::zipf{1.5, std::int64_t{1} << 60}, leat::zipf{2, 9}));
-    all.push_back(object(leat::negative_binomial{2.5, 0.2}, leat::negative_binomial{2, 0.5}));
     all.push_back(object(leat::categorical({1, 0, 7.5, 1e-3}), leat::categorical({1, 2})));
     all.push_back(object(leat::multivariate_normal({1, 2}, {{4, 1}, {1, 9}}),
                          leat::multivariate_normal({0}, {{1}})));
-    using half_open = leat::uniform<double, leat::ends::closed_open>;
-    all.push_back(object(half_open{-1, 2}, half_open{0, 1}));
     using bytes = leat::uniform_integer<std::int8_t>;
     all.push_back(object(bytes{-128, 5}, bytes{0, 1}));
-    all.push_back(object(leat::disk{{3, 4}, 2.5}, leat::disk{{0, 0}, 1}));
-    all.push_back(
-        object(leat::cone{{0, 0, 1}, {1, 2, 3}, 1, 2}, leat::cone{{0, 0, 0}, {0, 0, 1}, 1, 1}));
     all.push_back(object(leat::simplex<2>{}, leat::simplex<2>{{{{0, 0}, {5, 0}, {0, 5}}}}));
     using ring = std::vector<std::array<double, 2>>;
     const ring square{{0, 0}, {4, 0}, {4, 4}, {0, 4}};
@@ -116,10 +116,11 @@ std::vector<saved_object> objects() {
     using mesh = leat::triangle_mesh<>;
     all.push_back(object(mesh{{{0, 0, 0}, {1, 2, 3}, {1, 0, 1}, {0, 1, 1}}, {{0, 1, 2}, {1, 2, 3}}},
                          mesh{{{0, 0, 0}, {1, 0, 0}, {0, 1, 0}}, {{0, 1, 2}}}));
-    const auto two = [](double x) {
-        return leat::either{leat::disk{{x, 0}, 1}, leat::box{{5, 5}, {6, 7}}};
+    const auto parts = [](double x) {
+        return leat::either{leat::box{{5, 5}, {6, 7}},
+                            leat::without{leat::box{{0, 0}, {4, 4}}, leat::disk{{2, 2}, x}, 12}};
     };
-    all.push_back(object(two(0), two(1)));
+    all.push_back(object(parts(1), parts(0.5)));
     const auto rest = [](double x) {
         return leat::without{leat::box{{0, 0}, {4, 4}}, leat::disk{{2, 2}, x}};
     };
@@ -243,7 +244,7 @@ TEST(JsonCorruption, DamagedTextIsRefusedOrRestoresExactly) {
     damage harm("text");
     tally count;
     const auto all = objects();
-    for (int round = 0; round < 800; ++round) {
+    for (int round = 0; round < 1100; ++round) {
         for (const saved_object& one : all) {
             const std::string sound = one.document.dump();
             const std::string other = all[harm.below(all.size())].document.dump();
@@ -265,7 +266,7 @@ TEST(JsonCorruption, DamagedValuesAreRefusedOrRestoreExactly) {
     damage harm("value");
     tally count;
     const auto all = objects();
-    for (int round = 0; round < 800; ++round) {
+    for (int round = 0; round < 1100; ++round) {
         for (const saved_object& one : all) {
             const json& other = all[harm.below(all.size())].document;
             const json read = harm.value(one.document, other);
@@ -303,7 +304,7 @@ TEST(JsonCorruption, ForgedDocumentsAreRefusedOrRestoreWhatTheySay) {
     damage harm("forged");
     tally count;
     const auto all = objects();
-    for (int round = 0; round < 800; ++round) {
+    for (int round = 0; round < 1100; ++round) {
         for (const saved_object& one : all) {
             const json content = harm.value(one.document, all[harm.below(all.size())].document);
             if (!content.is_object()) {

@@ -18,6 +18,8 @@ template <class Engine>
 class counter_leap {
 public:
     using result_type = typename Engine::result_type;
+    /// The name under which it is saved.
+    static constexpr const char* engine_name = "counter_leap";
 
     static constexpr result_type min() noexcept { return Engine::min(); }
     static constexpr result_type max() noexcept { return Engine::max(); }
@@ -34,6 +36,9 @@ public:
         engine_.discard(skip_);
         return x;
     }
+
+    /// One to be read into.
+    static constexpr counter_leap for_reading() { return {Engine{}, 1}; }
 
     friend constexpr bool operator==(const counter_leap&, const counter_leap&) = default;
 

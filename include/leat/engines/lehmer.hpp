@@ -50,6 +50,10 @@ template <class UInt, UInt modulus>
 class lehmer_leap {
 public:
     using result_type = UInt;
+    /// The name under which it is saved.
+    static constexpr const char* engine_name = "lehmer_leap";
+    /// The parameters that belong to its name.
+    static constexpr UInt engine_parameters[] = {modulus};
 
     static constexpr result_type min() noexcept { return 1; }
     static constexpr result_type max() noexcept { return modulus - 1; }
@@ -63,6 +67,9 @@ public:
         next_ = detail::multiply_mod(multiplier_, next_, modulus);
         return x;
     }
+
+    /// One to be read into.
+    static constexpr lehmer_leap for_reading() noexcept { return {1, 1}; }
 
     friend constexpr bool operator==(const lehmer_leap&, const lehmer_leap&) = default;
 

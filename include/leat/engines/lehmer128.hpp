@@ -35,6 +35,8 @@ namespace leat {
 class lehmer128_leap {
 public:
     using result_type = std::uint64_t;
+    /// The name under which it is saved.
+    static constexpr const char* engine_name = "lehmer128_leap";
 
     static constexpr result_type min() noexcept { return 0; }
     static constexpr result_type max() noexcept { return ~result_type{0}; }
@@ -48,6 +50,9 @@ public:
         next_ = detail::multiply(multiplier_, next_);
         return x;
     }
+
+    /// One to be read into.
+    static constexpr lehmer128_leap for_reading() noexcept { return {{1, 0}, {1, 0}}; }
 
     friend constexpr bool operator==(const lehmer128_leap&, const lehmer128_leap&) = default;
 

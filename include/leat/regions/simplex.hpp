@@ -26,6 +26,7 @@
 
 #include <array>
 #include <cstddef>
+#include <optional>
 #include <type_traits>
 
 namespace leat {
@@ -70,23 +71,15 @@ public:
     /// The name under which it is saved.
     static constexpr const char* class_name = "simplex";
     /// What its constructor takes, by name.
-    static constexpr const char* argument_names[] = {"corners", "open"};
-    /// Calls use with what the constructor took.
+    static constexpr const char* argument_names[] = {"corners"};
+    /// Calls use with what the constructor took, which is nothing for the unit simplex.
     template <class Use>
     constexpr decltype(auto) arguments(Use use) const {
-        return use(shape_.corners(), shape_.is_open());
+        return use(shape_.is_open() ? std::nullopt : std::optional<corners_type>(corners()));
     }
     /// From those arguments.
-    static constexpr simplex from_arguments(const corners_type& corners, bool open) {
-        if (!open) {
-            return simplex(corners);
-        }
-        const simplex unit;
-        if (corners != unit.corners()) {
-            detail::refuse("simplex",
-                           "the corners of an open one must be those of the unit simplex");
-        }
-        return unit;
+    static constexpr simplex from_arguments(const std::optional<corners_type>& corners) {
+        return corners ? simplex(*corners) : simplex();
     }
 
     friend constexpr bool operator==(const simplex&, const simplex&) = default;

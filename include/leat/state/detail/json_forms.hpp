@@ -193,7 +193,13 @@ struct saved_form<T> {
     static T read(json_fields<Json>& fields) {
         const json_field<Json> state = fields.take("state");
         std::istringstream in(state_text(state));
-        T engine;
+        T engine = [] {
+            if constexpr (requires { T::for_reading(); }) {
+                return T::for_reading();
+            } else {
+                return T{};
+            }
+        }();
         in >> engine;
         if (in.fail() || !(in >> std::ws).eof()) {
             state.refuse("must be the words of a state that the engine can be in");

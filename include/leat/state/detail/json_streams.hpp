@@ -16,7 +16,6 @@
 #include <concepts>
 #include <cstddef>
 #include <cstdint>
-#include <sstream> // a moved-from stream has no text
 #include <utility> // move
 
 namespace leat::detail {
@@ -35,8 +34,7 @@ struct saved_form<T> {
     /// Throws where the stream was moved from: that must not come to life again.
     template <json_value Json>
     static Json write(const T& x) {
-        std::ostringstream text;
-        if ((text << x).fail()) {
+        if (x.was_moved_from()) {
             message m;
             m.text("leat::json: ").text(name);
             raise<error>(m.text(": saved after it was moved from; save what it was moved to"));

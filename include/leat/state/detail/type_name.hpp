@@ -125,7 +125,12 @@ struct engine_arguments {
     }
 };
 
-/// ... the engine that it wraps, and a size.
+/// ... the engine that it wraps, and perhaps a size.
+template <template <class> class Adaptor, named_engine Engine>
+struct engine_arguments<Adaptor<Engine>> {
+    static void list(name_arguments& all) { all.add_type<Engine>(); }
+};
+
 template <template <class, std::size_t> class Adaptor, class Engine, std::size_t K>
 struct engine_arguments<Adaptor<Engine, K>> {
     static void list(name_arguments& all) {
