@@ -24,7 +24,7 @@
 #include "leat/core/exponential.hpp"
 #include "leat/distributions/chi_squared.hpp"
 #include "leat/distributions/detail/discrete_deviance.hpp"
-#include "leat/distributions/detail/evaluate.hpp" // or_zero
+#include "leat/distributions/detail/evaluate.hpp" // or_zero, product
 #include "leat/distributions/detail/law.hpp"      // finite
 #include "leat/estimate/detail/incomplete_beta.hpp"
 
@@ -33,38 +33,6 @@
 namespace leat::testing::detail {
 
 using real = leat::detail::strict<double>;
-
-/// What no longer changes a sum or a product.
-inline constexpr double negligible = 0x1p-53;
-/// A bound for loops that end long before: after about the root of the degrees of freedom.
-inline constexpr int most_terms = 100'000'000;
-
-/// A continued fraction 1 / (b1 + a2 / (b2 + a3 / (b3 + ...))), from the front (Lentz).
-class continued_fraction {
-public:
-    constexpr explicit continued_fraction(double b1) noexcept
-        : below_(real(1.0) / b1), value_(below_) {}
-
-    /// Takes the next a and b; false when the value no longer changes.
-    constexpr bool append(real a, real b) noexcept {
-        below_ = real(1.0) / off_zero(b + a * below_);
-        const real above = off_zero(b + a * above_inverse_);
-        above_inverse_ = real(1.0) / above;
-        const real factor = above * below_;
-        value_ = value_ * factor;
-        return leat::detail::magnitude((factor - 1.0).value) > 2 * negligible;
-    }
-    [[nodiscard]] constexpr double value() const noexcept { return value_.value; }
-
-private:
-    static constexpr real off_zero(real x) noexcept {
-        return leat::detail::magnitude(x.value) < 0x1p-500 ? real(0x1p-500) : x;
-    }
-
-    real below_; // ratios of successive denominators and numerators
-    real above_inverse_ = 0.0;
-    real value_;
-};
 
 /// The areas on both sides of a point.
 struct tail_areas {
@@ -80,10 +48,12 @@ constexpr tail_areas chi_squared_tails(double x, double degrees) {
     if (!leat::detail::finite(x)) {
         return {1, 0};
     }
+    constexpr double negligible = 0x1p-53;
+    constexpr int most_terms = 100'000'000; // the loops end long before, after about sqrt(degrees)
     const real a = real(degrees) * 0.5;
     const real z = real(x) * 0.5;
     // z^a e^-z / Gamma(a)
-    const real front = real(chi_squared<double>{degrees}.density(x)) * x;
+    const double front = leat::detail::product(chi_squared<double>{degrees}.density(x), x);
     if (z < a + 1.0) {
         real term = real(1.0) / a;
         real sum = term;
@@ -91,19 +61,30 @@ constexpr tail_areas chi_squared_tails(double x, double degrees) {
             term = term * z / (a + static_cast<double>(n));
             sum = sum + term;
         }
-        const real below = front * sum;
-        return {below.value, (real(1.0) - below).value};
+        const double below = leat::detail::product(front, sum.value);
+        return {below, (real(1.0) - below).value};
     }
+    // 1 / (b0 + a1 / (b1 + a2 / (b2 + ...))) by the ratios of successive denominators and
+    // numerators, both held inverted. By induction the n-th of either is at least n + 1 + z - a.
     const real first = z - a + 1.0;
-    continued_fraction fraction(first.value);
+    real denominators = real(1.0) / first;
+    real numerators = 0.0;
+    real value = denominators;
     for (int n = 1; n < most_terms; ++n) {
         const real k = static_cast<double>(n);
-        if (!fraction.append(k * (a - k), first + k * 2.0)) {
+        const real above = k * (a - k);
+        const real beside = first + k * 2.0;
+        denominators = real(1.0) / (beside + above * denominators);
+        numerators = beside + above * numerators;
+        const real factor = numerators * denominators;
+        numerators = real(1.0) / numerators;
+        value = value * factor;
+        if (leat::detail::magnitude((factor - 1.0).value) <= 2 * negligible) {
             break;
         }
     }
-    const real above = front * fraction.value();
-    return {(real(1.0) - above).value, above.value};
+    const double above = leat::detail::product(front, value.value);
+    return {(real(1.0) - above).value, above};
 }
 
 /// P(|T| >= |t|) for Student's t with `degrees` >= 1.
@@ -144,6 +125,9 @@ constexpr double kolmogorov_beyond(double reach, std::uint64_t n) {
         const real mean = real(below) + reach;
         const real log_mass = real(d::log_poisson_mass(below, mean.value, -reach)) +
                               d::log_poisson_mass(above, left.value, reach) - total;
+        if (log_mass < -700.0) { // beside the others it is nothing, and its share may be subnormal
+            continue;
+        }
         sum = sum + real(d::natural_exp(log_mass.value)) * reach / mean;
     }
     return sum.value < 0.5 ? (sum * 2.0).value : 1.0;
