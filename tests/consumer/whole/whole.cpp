@@ -1,6 +1,9 @@
 // All of leat at once, something of every area used, as a stranger's compiler and flags see it.
 
+#include "leat/compat.hpp"
+#include "leat/estimate.hpp"
 #include "leat/leat.hpp"
+#include "leat/state.hpp"
 #include "leat/testing.hpp"
 
 #include <array>
@@ -30,6 +33,17 @@ std::uint64_t use_engines(const leat::source& study) {
     return e() + mine() + leat::philox4x32{7}() + leat::testing::all_ones{}();
 }
 
+double use_the_rest(leat::stream& s) {
+    leat::compat::srand(20261201);
+    leat::running_moments waits;
+    for (int i = 0; i < 10; ++i) {
+        waits.add(leat::exponential{2.0}(s) + leat::compat::rand_unit());
+    }
+    const leat::manifest nothing_opened;
+    return leat::student_interval(waits, 0.95).upper +
+           static_cast<double>(nothing_opened.openings().size());
+}
+
 } // namespace
 
 int main() {
@@ -39,6 +53,7 @@ int main() {
     leat::fill(filled, leat::exponential{1.0}, s);
     std::vector<int> cards{1, 2, 3};
     leat::shuffle(cards, s);
-    const double sum = use_laws(s) + use_regions(s) + filled[0] + leat::unit(s);
+    double sum = use_laws(s) + use_regions(s) + filled[0] + leat::unit(s);
+    sum += use_the_rest(s);
     return use_engines(study) == 0 || sum == 0 || leat::below(6u, s) > 5 ? 1 : 0;
 }
