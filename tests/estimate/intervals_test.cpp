@@ -169,6 +169,32 @@ TEST(ProportionIntervals, ClopperPearsonAgreesWithBoost) {
     }
 }
 
+// The ends leave exactly the tail, also at levels next to 1, where a small step of the search is no
+// sign of its end, and for more trials than doubles can tell apart by shares.
+TEST(ProportionIntervals, ClopperPearsonHoldsAtTheEndsOfItsDomain) {
+    const std::uint64_t counts[][2] = {{3, 4}, {4, 6}, {1, 3}, {0, 2}, {999, 1000}, {70, 100000}};
+    for (const auto& [k, n] : counts) {
+        for (const double level : {0.001, 1 - 0x1p-30, 1 - 0x1p-53}) {
+            const interval found = leat::clopper_pearson_interval(k, n, level);
+            const auto hits = static_cast<double>(k);
+            const auto misses = static_cast<double>(n - k);
+            const double tail = (1 - level) / 2;
+            if (k > 0) {
+                const double share = boost::math::ibeta(hits, misses + 1, found.lower);
+                EXPECT_NEAR(share / tail, 1, 1e-9) << k << " of " << n << ", level " << level;
+            }
+            if (found.upper < 0.999) { // nearer to 1 the share changes from double to double
+                const double share = boost::math::ibetac(hits + 1, misses, found.upper);
+                EXPECT_NEAR(share / tail, 1, 1e-9) << k << " of " << n << ", level " << level;
+            }
+        }
+    }
+    constexpr std::uint64_t most = std::uint64_t{1} << 53;
+    const interval half = leat::clopper_pearson_interval(most / 2, most);
+    EXPECT_TRUE(half.contains(0.5));
+    EXPECT_NEAR(half.half_width() * 2 * std::sqrt(0x1p53), 1.959963984540054, 1e-6);
+}
+
 TEST(ProportionIntervals, WilsonSolvesItsEquation) {
     // The ends are where |p - share| = z sqrt(p (1 - p) / n) (Wilson 1927).
     for (const std::uint64_t n : {1u, 7u, 1000u, 1000000u}) {
