@@ -205,7 +205,65 @@ TEST(Ledger, RefusesASecondOpeningAtOnceWhenToldTo) {
     }
 }
 
+TEST(Ledger, NamesThePlaceWhereASourceWasTold) {
+    ledger book;
+    const source study{1, book};
+    (void)study.stream("noise", 3);
+    const source mine = study.here().branch("noise");
+    const std::string place = "ledger_test.cpp:" + std::to_string(__LINE__ - 1);
+    leat::stream s = mine.stream(3);
+    (void)s.replica();
+    (void)s.offspring(1);
+    (void)mine.here("C:\\src\\demand.cpp", 42).stream(4);
+    (void)study.stream("noise", 5);
+    std::vector<std::string> places;
+    for (const ledger_entry& e : book.entries()) {
+        places.push_back(e.place);
+    }
+    EXPECT_EQ(places, (texts{"", place, place, place, "demand.cpp:42", ""}));
+    ASSERT_EQ(book.repeated().size(), 1u);
+    EXPECT_EQ(to_string(book.repeated()[0]),
+              R"(opened twice: source{1}.stream("noise", 3) (opening 1, 0 words drawn) and )"
+              R"(source{1}.branch("noise").stream(3) (opening 2, from )" +
+                  place + ", 0 words drawn)");
+    EXPECT_NE(to_string(book).find(", from demand.cpp:42, at word 0"), std::string::npos);
+    // Told or not, it is the same source.
+    EXPECT_EQ(study.here(), study);
+    EXPECT_EQ(source{1}.here().stream("noise", 3).address(), s.address());
+
+    ledger strict{ledger::repeats::refuse};
+    const source other{1, strict};
+    (void)other.here("a/first.cpp", 1).stream();
+    try {
+        (void)other.here("b/second.cpp", 2).stream();
+        FAIL() << "it was opened";
+    } catch (const leat::repeated_stream& e) {
+        EXPECT_STREQ(e.what(), "leat::ledger: opened twice: source{1}.stream() (opening 2, from "
+                               "second.cpp:2), first as source{1}.stream() (opening 1, from "
+                               "first.cpp:1)");
+    }
+}
+
 // ---- counting, and the same numbers ----
+
+// Without a ledger, a stream can still be drawn from while compiling.
+constexpr source plain_study{1};
+static_assert([] {
+    leat::stream s = plain_study.here().branch("x").stream(3);
+    leat::stream t = std::move(s);
+    t.seek(7);
+    leat::stream r = t.replica();
+    r.limit(9);
+    return r() == t() && r.offspring(1)() != t();
+}());
+static_assert([] {
+    leat::thin_stream s = plain_study.thin_stream("x", 3);
+    leat::thin_stream t = std::move(s);
+    std::array<std::uint64_t, 3> words{};
+    t.draw_into(words);
+    t.give_back(1);
+    return t.replica()() == words[2] && t() == words[2];
+}());
 
 /// Does the same to a recorded stream and to one that is not, and counts.
 template <class Stream>

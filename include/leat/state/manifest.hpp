@@ -63,6 +63,9 @@ public:
     explicit manifest(const ledger& book) : manifest() {
         sources_ = book.sources();
         openings_ = book.entries();
+        for (ledger_entry& e : openings_) {
+            e.place.clear(); // of the program's text, not of the run
+        }
         make_index();
     }
 

@@ -10,7 +10,10 @@
 // Everything opened from a recorded source and from its branches is entered: streams, thin streams,
 // engines, the chunks of fill_chunks, offspring and replicas; each with its path as the program
 // spells it, such as source{1}.branch("wind", 3).stream(7), its address, and a number that counts
-// the openings in the order in which they came (which threads may change from run to run).
+// the openings in the order in which they came (which threads may change from run to run). Where in
+// the program that was is known if the source was told: study.here() is the same source, and names
+// the file and line of that call. A function that is given a source may begin with
+// `const leat::source mine = study.here();`.
 //
 // Opened twice means: two streams or engines at one address, so that both give the same numbers.
 // Streams cannot be copied, but nothing else keeps two parts of a program from asking for the same
@@ -57,6 +60,7 @@ namespace leat {
 struct ledger_entry {
     std::uint64_t opening = 0; ///< 1 for the first of the ledger
     std::string path;          ///< as the program spells it
+    std::string place;         ///< file and line of source::here(), or empty
     stream_address address{};  ///< where the stream stands
     std::uint64_t limit = 0;   ///< the stream's limit
     std::uint64_t words = 0;   ///< drawn so far; 0 for an engine
@@ -78,17 +82,28 @@ public:
     using error::error;
 };
 
+namespace detail {
+
+/// PATH (opening 17, from FILE:LINE
+inline std::string named(const ledger_entry& e) {
+    return e.path + " (opening " + std::to_string(e.opening) +
+           (e.place.empty() ? "" : ", from " + e.place);
+}
+
+} // namespace detail
+
 /// The opening as one line.
 inline std::string to_string(const ledger_entry& e) {
-    return "opening " + std::to_string(e.opening) + ": " + e.path + ", at word " +
+    return "opening " + std::to_string(e.opening) + ": " + e.path +
+           (e.place.empty() ? "" : ", from " + e.place) + ", at word " +
            std::to_string(e.address.position) + ", " + std::to_string(e.words) + " drawn";
 }
 
 /// Both openings in one line.
 inline std::string to_string(const repeated_opening& r) {
-    return "opened twice: " + r.first.path + " (opening " + std::to_string(r.first.opening) + ", " +
-           std::to_string(r.first.words) + " words drawn) and " + r.again.path + " (opening " +
-           std::to_string(r.again.opening) + ", " + std::to_string(r.again.words) + " words drawn)";
+    return "opened twice: " + detail::named(r.first) + ", " + std::to_string(r.first.words) +
+           " words drawn) and " + detail::named(r.again) + ", " + std::to_string(r.again.words) +
+           " words drawn)";
 }
 
 /// The list of what a study opens. See above.
@@ -151,7 +166,7 @@ private:
     class alignas(64) entry final : public detail::stream_record {
     public:
         entry(ledger& book, std::uint64_t number, std::string path, const stream_address& where,
-              std::uint64_t limit, std::uint64_t line)
+              std::uint64_t limit, std::uint64_t line, std::string_view place)
             : position_(where.position),
               limit_(limit),
               key_(where.key),
@@ -159,6 +174,7 @@ private:
               number_(number),
               line_(line),
               path_(std::move(path)),
+              place_(place),
               book_(book) {}
 
         // One thread draws from a stream at a time, so that a sum need not be atomic as a whole.
@@ -173,10 +189,10 @@ private:
         stream_record* offspring(const detail::path_part& i, const stream_address& where) override {
             std::string path = path_;
             detail::spell_call(path, "offspring", std::span(&i, 1));
-            return &book_.enter(std::move(path), where, detail::stream_capacity, line_);
+            return &book_.enter(std::move(path), where, detail::stream_capacity, line_, place_);
         }
         stream_record* replica(const stream_address& where, std::uint64_t limit) override {
-            return &book_.enter(path_ + ".replica()", where, limit, new_line);
+            return &book_.enter(path_ + ".replica()", where, limit, new_line, place_);
         }
 
         [[nodiscard]] std::uint64_t words() const noexcept {
@@ -185,12 +201,11 @@ private:
         [[nodiscard]] ledger_entry now() const {
             return {number_,
                     path_,
+                    std::string(place_),
                     {key_, upper_, position_.load(std::memory_order_relaxed)},
                     limit_.load(std::memory_order_relaxed),
                     words()};
         }
-        [[nodiscard]] std::string_view path() const noexcept { return path_; }
-        [[nodiscard]] std::uint64_t number() const noexcept { return number_; }
 
     private:
         std::atomic<std::uint64_t> position_;
@@ -201,30 +216,38 @@ private:
         std::uint64_t number_;
         std::uint64_t line_;
         std::string path_;
+        std::string_view place_; // a branch_record's
         ledger& book_;
     };
 
-    /// A seed and branches.
+    /// A seed and branches, and the place where what follows is opened.
     class branch_record final : public detail::source_record {
     public:
-        branch_record(ledger& book, const std::string& path) : book_(book), path_(path) {}
+        branch_record(ledger& book, std::string path, std::string place)
+            : book_(book), path_(std::move(path)), place_(std::move(place)) {}
 
         source_record* branch(std::span<const detail::path_part> parts) override {
             std::string path = path_;
             detail::spell_call(path, "branch", parts);
-            return &book_.branch(path);
+            return &book_.branch(std::move(path), place_);
+        }
+        source_record* at(const char* file, std::uint64_t line) override {
+            std::string_view name(file);
+            name.remove_prefix(name.find_last_of("/\\") + 1); // all of it where there is none
+            return &book_.branch(path_, std::string(name) + ":" + std::to_string(line));
         }
         detail::stream_record* open(detail::opening as, std::span<const detail::path_part> parts,
                                     const stream_address& where) override {
             std::string path = path_;
             detail::spell_call(path, detail::opening_names[static_cast<std::size_t>(as)], parts);
-            entry& e = book_.enter(std::move(path), where, detail::stream_capacity, 0);
+            entry& e = book_.enter(std::move(path), where, detail::stream_capacity, 0, place_);
             return as == detail::opening::engine ? nullptr : &e;
         }
 
     private:
         ledger& book_;
         const std::string path_;
+        const std::string place_;
     };
 
     /// An address and the line of descent: 0, or the number of the replica that it comes from. The
@@ -247,27 +270,30 @@ private:
         std::string path = "source{";
         detail::spell(path, seed);
         path += '}';
-        branch_record& record = branch(path);
+        branch_record& record = branch(path, {});
         const std::scoped_lock lock(mutex_);
         sources_.push_back(std::move(path));
         return &record;
     }
 
-    branch_record& branch(const std::string& path) {
+    branch_record& branch(std::string path, std::string place) {
         const std::scoped_lock lock(mutex_);
-        return branches_.try_emplace(path, *this, path).first->second;
+        std::string both = path + '\n' + place; // neither has a line end
+        return branches_.try_emplace(std::move(both), *this, std::move(path), std::move(place))
+            .first->second;
     }
 
     entry& enter(std::string path, const stream_address& where, std::uint64_t limit,
-                 std::uint64_t line) {
+                 std::uint64_t line, std::string_view place) {
         const std::scoped_lock lock(mutex_);
         const std::uint64_t number = entries_.size() + 1;
         const identity id{where.key, where.upper, line == new_line ? number : line};
         const auto known = first_.find(id);
         if (known != first_.end() && policy_ == repeats::refuse) {
-            refuse_repeated(*known->second, number, path);
+            refuse_repeated(known->second->now(), {number, path, std::string(place)});
         }
-        entry& e = entries_.emplace_back(*this, number, std::move(path), where, limit, id.line);
+        entry& e =
+            entries_.emplace_back(*this, number, std::move(path), where, limit, id.line, place);
         if (known != first_.end()) {
             repeated_.emplace_back(known->second, &e);
         } else {
@@ -276,15 +302,14 @@ private:
         return e;
     }
 
-    [[noreturn]] static void refuse_repeated(const entry& first, std::uint64_t number,
-                                             std::string_view path) {
-        constexpr std::size_t room = 140; // so that both fit in a message
+    [[noreturn]] static void refuse_repeated(ledger_entry first, ledger_entry again) {
+        constexpr std::size_t room = 120; // so that both fit in a message
+        first.path.resize(first.path.size() < room ? first.path.size() : room);
+        again.path.resize(again.path.size() < room ? again.path.size() : room);
         detail::message m;
-        m.text("leat::ledger: opened twice: ")
-            .text(path.data(), path.size() < room ? path.size() : room);
-        m.text(" (opening ").value(number).text("), first as ");
-        m.text(first.path().data(), first.path().size() < room ? first.path().size() : room);
-        detail::raise<repeated_stream>(m.text(" (opening ").value(first.number()).text(")"));
+        m.text("leat::ledger: opened twice: ").text(detail::named(again).c_str());
+        detail::raise<repeated_stream>(
+            m.text("), first as ").text(detail::named(first).c_str()).text(")"));
     }
 
     repeats policy_;

@@ -39,6 +39,8 @@ protected:
 class source_record {
 public:
     virtual source_record* branch(std::span<const path_part> parts) = 0;
+    /// The same, and what is opened from it is opened at this place in the program.
+    virtual source_record* at(const char* file, std::uint64_t line) = 0;
     /// Enters what is opened at an address. Null for an engine, whose words are not counted.
     virtual stream_record* open(opening as, std::span<const path_part> parts,
                                 const stream_address& where) = 0;

@@ -62,6 +62,16 @@ public:
         return sub_tree;
     }
 
+    /// The same source. A ledger names the place of this call beside whatever is opened from it.
+    [[nodiscard]] constexpr source here(const char* file = __builtin_FILE(),
+                                        std::uint64_t line = __builtin_LINE()) const {
+        source same = *this;
+        if (record_ != nullptr) [[unlikely]] {
+            same.record_ = record_->at(file, line);
+        }
+        return same;
+    }
+
     /// The stream at this path, at its first word.
     template <class... Parts>
     [[nodiscard]] constexpr leat::stream stream(const Parts&... parts) const {
