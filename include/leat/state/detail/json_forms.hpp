@@ -236,7 +236,9 @@ private:
     struct types {};
     struct listed {
         template <class... Arguments>
-        types<std::remove_cvref_t<Arguments>...> operator()(const Arguments&...) const;
+        types<std::remove_cvref_t<Arguments>...> operator()(const Arguments&...) const {
+            return {};
+        }
     };
     using argument_types = decltype(std::declval<const T&>().arguments(listed{}));
 
