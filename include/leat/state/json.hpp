@@ -1,4 +1,4 @@
-// Save and restore as JSON: engines, streams, addresses, sources, laws and regions, with
+// Save and restore as JSON: engines, streams, addresses, sources, laws, regions and manifests, with
 // nlohmann_json. This is the only header of leat that includes it, and no other header includes
 // this one.
 //
@@ -16,12 +16,14 @@
 //
 // Errors: `state_refused` names what is wrong: not such a document, another type, a later version,
 // a field that is missing, unknown or of the wrong kind, a value that the type refuses, a checksum
-// that does not fit. What was to be restored is then as it was before. Not checked: whether a
-// document was forged on purpose. The checksum keeps no secret.
+// that does not fit. What was to be restored is then as it was before.
 //
-// The format is frozen as sequences are: what any version 1.x wrote, later ones read
-// (tests/golden/documents.json). Saving a rejection saves no code: restore it with the predicate
-// that it had.
+// The format is frozen as sequences are: what one version wrote, every later one of the same major
+// number reads (tests/golden/documents.json). Saving a rejection saves no code: restore it with the
+// predicate that it had.
+//
+// Not for documents from people you do not trust: the checksum keeps no secret, so that a forged
+// document is taken if its values are sound, and a long list asks for memory.
 
 #ifndef LEAT_STATE_JSON_HPP
 #define LEAT_STATE_JSON_HPP
