@@ -134,8 +134,9 @@ function file_documentation(    i, j, k, literal, was_literal) {
 # Text that Doxygen shows as it stands, but for what is in backticks.
 function as_prose(text,    i, c, out) {
     out = ""
-    if (!in_code) {
-        sub(/^ *[0-9]+[.]/, "&\\", text) # not an item of a list
+    if (!in_code && match(text, /^ *[0-9]+[.]/)) { # not an item of a list
+        out = substr(text, 1, RLENGTH - 1) "\\."
+        text = substr(text, RLENGTH + 1)
     }
     for (i = 1; i <= length(text); ++i) {
         c = substr(text, i, 1)
@@ -228,7 +229,7 @@ function document(i, text,    first, indent) {
 function namespace_detail(i,    k, name) {
     if (line[i] ~ /^[a-z].* detail::[a-z_]+[(]/) { # the definition of what was declared there
         line[i] = "/** @cond */ " line[i]
-        for (k = i; line[k] !~ /^}/; ++k) {
+        for (k = i; k < NR && line[k] !~ /^}|^[^ ].*[}]$/; ++k) {
         }
         line[k] = line[k] " /** @endcond */"
     }
@@ -236,7 +237,7 @@ function namespace_detail(i,    k, name) {
         for (k = i; line[k - 1] ~ /^(template|\/\/\/| )/; --k) {
         }
         line[k - 1] = line[k - 1] "/** @cond */"
-        for (k = i; line[k] !~ /^};/; ++k) {
+        for (k = i; k < NR && line[k] !~ /^};/; ++k) {
         }
         line[k] = line[k] " /** @endcond */"
     }
