@@ -156,7 +156,7 @@ function same_as_file(i,    stem, k) {
     sub(/^.*\//, "", stem)
     sub(/[.]hpp$/, "", stem)
     if (line[i] ~ "^class " stem "( |$)" && line[i] !~ /;$/) {
-        for (k = i - 1; line[k] ~ /^(template| )/; --k) {
+        for (k = i - 1; line[k] ~ /^(template|requires| )/; --k) {
         }
         if (line[k] ~ /^\/\/\//) {
             line[k] = line[k] " @details @copybrief " file_name() " @copydetails " file_name()

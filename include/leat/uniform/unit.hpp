@@ -31,7 +31,12 @@
 namespace leat {
 
 /// Which ends of an interval belong to it; the lower end is named first.
-enum class ends { open, closed_open, open_closed, closed };
+enum class ends {
+    open,        ///< (a, b)
+    closed_open, ///< [a, b)
+    open_closed, ///< (a, b]
+    closed,      ///< [a, b]
+};
 
 namespace detail {
 
