@@ -166,13 +166,13 @@ private:
     class alignas(64) entry final : public detail::stream_record {
     public:
         entry(ledger& book, std::uint64_t number, std::string path, const stream_address& where,
-              std::uint64_t limit, std::uint64_t line, std::string_view place)
+              std::uint64_t limit, std::uint64_t descent, std::string_view place)
             : position_(where.position),
               limit_(limit),
               key_(where.key),
               upper_(where.upper),
               number_(number),
-              line_(line),
+              descent_(descent),
               path_(std::move(path)),
               place_(place),
               book_(book) {}
@@ -189,10 +189,10 @@ private:
         stream_record* offspring(const detail::path_part& i, const stream_address& where) override {
             std::string path = path_;
             detail::spell_call(path, "offspring", std::span(&i, 1));
-            return &book_.enter(std::move(path), where, detail::stream_capacity, line_, place_);
+            return &book_.enter(std::move(path), where, detail::stream_capacity, descent_, place_);
         }
         stream_record* replica(const stream_address& where, std::uint64_t limit) override {
-            return &book_.enter(path_ + ".replica()", where, limit, new_line, place_);
+            return &book_.enter(path_ + ".replica()", where, limit, new_descent, place_);
         }
 
         [[nodiscard]] std::uint64_t words() const noexcept {
@@ -214,7 +214,7 @@ private:
         std::uint64_t key_;
         std::uint64_t upper_;
         std::uint64_t number_;
-        std::uint64_t line_;
+        std::uint64_t descent_;
         std::string path_;
         std::string_view place_; // a branch_record's
         ledger& book_;
@@ -250,21 +250,21 @@ private:
         const std::string place_;
     };
 
-    /// An address and the line of descent: 0, or the number of the replica that it comes from. The
+    /// An address and its descent: 0, or the number of the replica that it comes from. The
     /// offspring of a replica are meant to be those of the original.
     struct identity {
         std::uint64_t key;
         std::uint64_t upper;
-        std::uint64_t line;
+        std::uint64_t descent;
 
         friend bool operator==(const identity&, const identity&) = default;
     };
     struct identity_hash {
         std::size_t operator()(const identity& i) const noexcept { // a key is a hash already
-            return std::hash<std::uint64_t>{}(i.key ^ (i.upper + i.line) * 0x9e3779b97f4a7c15u);
+            return std::hash<std::uint64_t>{}(i.key ^ (i.upper + i.descent) * 0x9e3779b97f4a7c15u);
         }
     };
-    static constexpr std::uint64_t new_line = ~std::uint64_t{0};
+    static constexpr std::uint64_t new_descent = ~std::uint64_t{0};
 
     detail::source_record* start(const detail::path_part& seed) override {
         std::string path = "source{";
@@ -284,16 +284,16 @@ private:
     }
 
     entry& enter(std::string path, const stream_address& where, std::uint64_t limit,
-                 std::uint64_t line, std::string_view place) {
+                 std::uint64_t descent, std::string_view place) {
         const std::scoped_lock lock(mutex_);
         const std::uint64_t number = entries_.size() + 1;
-        const identity id{where.key, where.upper, line == new_line ? number : line};
+        const identity id{where.key, where.upper, descent == new_descent ? number : descent};
         const auto known = first_.find(id);
         if (known != first_.end() && policy_ == repeats::refuse) {
             refuse_repeated(known->second->now(), {number, path, std::string(place)});
         }
         entry& e =
-            entries_.emplace_back(*this, number, std::move(path), where, limit, id.line, place);
+            entries_.emplace_back(*this, number, std::move(path), where, limit, id.descent, place);
         if (known != first_.end()) {
             repeated_.emplace_back(known->second, &e);
         } else {
