@@ -1,5 +1,5 @@
 #!/usr/bin/env python3
-"""The tables that tests/golden/SPECIFICATION.md refers to, tests/golden/tables.json.
+"""The tables that tests/golden/SPECIFICATION.md and LAWS.md refer to, tests/golden/tables.json.
 
 Run without arguments it checks that the file holds what the library's headers hold; with --write it
 writes the file from them. Reals stand as hexadecimal floating point texts, bars as hexadecimal words.
@@ -13,6 +13,7 @@ import sys
 
 ROOT = os.path.join(os.path.dirname(os.path.abspath(__file__)), "..", "..")
 REAL = r"-?0x[0-9a-f.]+p-?\d+|0\.0"
+PAIR = r"\{(%s), (%s)\}" % (REAL, REAL)
 
 
 def header(path):
@@ -25,7 +26,7 @@ def constant(text, name):
 
 
 def rows(text, name, pattern, count):
-    body = re.search(r" %s\[%d\] = \{\n(.*?)\n\};" % (name, count), text, re.DOTALL).group(1)
+    body = re.search(r" %s\[%d\] = \{(.*?)\n\};" % (name, count), text, re.DOTALL).group(1)
     found = [list(row) if isinstance(row, tuple) else row for row in re.findall(pattern, body)]
     if len(found) != count:
         raise SystemExit("%s: %d entries read, %d expected" % (name, len(found), count))
@@ -35,9 +36,35 @@ def rows(text, name, pattern, count):
 def tables():
     powers = header("core/exponential_table.hpp")
     layers = header("distributions/detail/ziggurat_table.hpp")
+    logs = header("core/logarithm_table.hpp")
+    gammas = header("core/log_gamma_table.hpp")
+    sines = header("core/sine_table.hpp")
+    angles = header("core/arctangent_table.hpp")
     result = {"exp": {name: constant(powers, name)
                       for name in ("steps_per_log", "log_step_high", "log_step_low")}}
-    result["exp"]["powers"] = rows(powers, "power_of_two_table", r"\{(%s), (%s)\}" % (REAL, REAL), 128)
+    result["exp"]["powers"] = rows(powers, "power_of_two_table", PAIR, 128)
+    result["log"] = {
+        "first": re.search(r"log_first = 0x([0-9a-f]{16});", logs).group(1),
+        "two_high": constant(logs, "log_two_high"),
+        "two_low": constant(logs, "log_two_low"),
+        "polynomial": rows(logs, "log_polynomial", REAL, 6),
+        "entries": rows(logs, "logarithm_table", r"\{(%s), (%s), (%s)\}" % (REAL, REAL, REAL), 128),
+    }
+    result["log_gamma"] = {
+        "middle": rows(gammas, "log_gamma_middle", REAL, 24),
+        "stirling": rows(gammas, "stirling_series", REAL, 9),
+        "half_log_two_pi": constant(gammas, "half_log_two_pi"),
+    }
+    result["sine_cosine"] = {
+        "two_pi": constant(sines, "two_pi"),
+        "two_pi_rest": constant(sines, "two_pi_rest"),
+        "entries": rows(sines, "sine_table", PAIR, 128),
+    }
+    result["arctangent"] = {
+        "half_pi": constant(angles, "half_pi"),
+        "half_pi_rest": constant(angles, "half_pi_rest"),
+        "entries": rows(angles, "arctangent_table", PAIR, 65),
+    }
     for law in ("normal", "exponential"):
         result[law] = {
             "tail": constant(layers, law + "_tail"),
