@@ -5,6 +5,8 @@
 // checksum that fits again, as a forger would, where the fields' own checks decide: what is then
 // accepted must be saved again as the very document that was read.
 
+#include "support/sanitized.hpp"
+
 #include "leat/distributions/categorical.hpp"
 #include "leat/distributions/multivariate_normal.hpp"
 #include "leat/distributions/normal.hpp"
@@ -42,6 +44,10 @@
 namespace {
 
 using nlohmann::json;
+
+/// How often each document is damaged, in each of the three ways.
+constexpr int rounds = leat_test::sanitized ? 100 : 640;
+constexpr int least_tried = leat_test::sanitized ? 1500 : 10000;
 
 /// What reading a damaged document came to.
 enum class ending { refused, exact, another, target_changed, other_exception };
@@ -244,7 +250,7 @@ TEST(JsonCorruption, DamagedTextIsRefusedOrRestoresExactly) {
     damage harm("text");
     tally count;
     const auto all = objects();
-    for (int round = 0; round < 1100; ++round) {
+    for (int round = 0; round < rounds; ++round) {
         for (const saved_object& one : all) {
             const std::string sound = one.document.dump();
             const std::string other = all[harm.below(all.size())].document.dump();
@@ -258,7 +264,7 @@ TEST(JsonCorruption, DamagedTextIsRefusedOrRestoresExactly) {
         }
     }
     count.print("text");
-    EXPECT_GE(count.tried, 10000);
+    EXPECT_GE(count.tried, least_tried);
     EXPECT_GT(count.ended[1], 0); // white space, a digit more: the reading is no blind refusal
 }
 
@@ -266,7 +272,7 @@ TEST(JsonCorruption, DamagedValuesAreRefusedOrRestoreExactly) {
     damage harm("value");
     tally count;
     const auto all = objects();
-    for (int round = 0; round < 1100; ++round) {
+    for (int round = 0; round < rounds; ++round) {
         for (const saved_object& one : all) {
             const json& other = all[harm.below(all.size())].document;
             const json read = harm.value(one.document, other);
@@ -274,7 +280,7 @@ TEST(JsonCorruption, DamagedValuesAreRefusedOrRestoreExactly) {
         }
     }
     count.print("values");
-    EXPECT_GE(count.tried, 10000);
+    EXPECT_GE(count.tried, least_tried);
 }
 
 /// The document with a checksum that fits, of the type that it was saved from.
@@ -289,7 +295,7 @@ TEST(JsonCorruption, WithoutTheChecksumDamageWouldPass) {
     damage harm("value");
     const auto all = objects();
     int wrong = 0;
-    for (int round = 0; round < 100; ++round) {
+    for (int round = 0; round < rounds / 8; ++round) {
         for (const saved_object& one : all) {
             const json& other = all[harm.below(all.size())].document;
             const json read = harm.value(one.document, other);
@@ -297,14 +303,14 @@ TEST(JsonCorruption, WithoutTheChecksumDamageWouldPass) {
                      one.restore(forged(read, one.document), one.document) == ending::another;
         }
     }
-    EXPECT_GT(wrong, 100);
+    EXPECT_GT(wrong, rounds / 8);
 }
 
 TEST(JsonCorruption, ForgedDocumentsAreRefusedOrRestoreWhatTheySay) {
     damage harm("forged");
     tally count;
     const auto all = objects();
-    for (int round = 0; round < 1100; ++round) {
+    for (int round = 0; round < rounds; ++round) {
         for (const saved_object& one : all) {
             const json content = harm.value(one.document, all[harm.below(all.size())].document);
             if (!content.is_object()) {
@@ -315,8 +321,8 @@ TEST(JsonCorruption, ForgedDocumentsAreRefusedOrRestoreWhatTheySay) {
         }
     }
     count.print("forged");
-    EXPECT_GE(count.tried, 10000);
-    EXPECT_GT(count.ended[1], 1000);
+    EXPECT_GE(count.tried, least_tried);
+    EXPECT_GT(count.ended[1], least_tried / 10);
 }
 
 } // namespace
