@@ -86,7 +86,7 @@ TEST_F(skerry_bank_checkpoint, refuses_or_restores_whatever_is_damaged) {
     }
     leat::stream words = leat::source{"skerry_bank_checkpoint"}.stream("damage");
     const leat::uniform_integer<std::size_t> place{0, text_.size() - 1};
-    for (int i = 0; i < 500; ++i) {
+    for (int i = 0; i < 300; ++i) {
         std::string flipped = text_;
         const std::size_t at = place(words);
         flipped[at] = static_cast<char>(flipped[at] ^ (1 << leat::below(8, words)));
