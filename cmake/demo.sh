@@ -7,7 +7,6 @@ root=$(cd "$(dirname "$0")/.." && pwd)
 
 need_build_tools
 need nlohmann-json3-dev has_header nlohmann/json.hpp
-need libboost-dev has_header boost/math/distributions/students_t.hpp
 install_missing
 
 configure_and_build "$root/build/demo" leat_skerry_bank \
