@@ -59,10 +59,22 @@ std::string saved_name() {
     }
 }
 
+/// Makes a document of content; the type's name by a function, to keep callers small.
+template <json_value Json>
+[[gnu::noinline]] void write_document(Json& document, std::string (*name)(), const Json& content) {
+    document = seal(name(), saved_version, content);
+}
+
+/// The fields of a document that is sound.
+template <json_value Json>
+[[gnu::noinline]] json_fields<Json> read_document(const Json& document, std::string (*name)()) {
+    return unseal(document, name(), saved_version);
+}
+
 /// What a document holds.
 template <saved T, json_value Json>
 [[gnu::noinline]] T restore(const Json& document) {
-    json_fields<Json> fields = unseal(document, saved_name<T>(), saved_version);
+    json_fields<Json> fields = read_document(document, &saved_name<T>);
     T x = saved_form<T>::read(fields);
     fields.end();
     return x;
@@ -73,8 +85,8 @@ template <saved T, json_value Json>
 /// Makes `j` the document of x. Throws where x is a stream that was moved from.
 template <detail::json_value Json, detail::saved T>
 [[gnu::noinline]] void to_json(Json& j, const T& x) {
-    j = detail::seal(detail::saved_name<T>(), detail::saved_version,
-                     detail::saved_form<T>::template write<Json>(x));
+    detail::write_document(j, &detail::saved_name<T>,
+                           detail::saved_form<T>::template write<Json>(x));
 }
 
 /// Makes x what the document says. Throws `state_refused`, and leaves x as it was, where it is no

@@ -49,12 +49,6 @@ struct is_list<std::vector<T>> : std::true_type {};
 template <class T, std::size_t N>
 struct is_list<std::array<T, N>> : std::true_type {};
 
-/// Gives an object a member.
-template <json_value Json>
-[[gnu::noinline]] void put(Json& object, const char* name, Json value) {
-    object[name] = std::move(value);
-}
-
 template <class T>
 inline constexpr bool is_optional = false;
 template <class T>
@@ -134,6 +128,19 @@ requires is_list<T>::value T from_value(const json_field<Json>& field) {
     }
 }
 
+/// Gives an object a member. Out of line, as its opposite, so that a type with many fields adds
+/// little code of its own.
+template <json_value Json, class T>
+[[gnu::noinline]] void put(Json& object, const char* name, const T& x) {
+    object[name] = to_value<Json>(x);
+}
+
+/// Takes a member.
+template <class T, json_value Json>
+[[gnu::noinline]] T take(json_fields<Json>& fields, const char* name) {
+    return from_value<T>(fields.take(name));
+}
+
 /// A law, by its parameters.
 template <named_law T>
 struct saved_form<T> {
@@ -143,15 +150,15 @@ struct saved_form<T> {
     static Json write(const T& x) {
         Json content = Json::object();
         const parameters p = x.param();
-        parameters::each(
-            p, [&](const char* name, const auto& field) { content[name] = to_value<Json>(field); });
+        parameters::each(p,
+                         [&](const char* name, const auto& field) { put(content, name, field); });
         return content;
     }
     template <json_value Json>
     static T read(json_fields<Json>& fields) {
         parameters p{};
         parameters::each(p, [&](const char* name, auto& field) {
-            field = from_value<std::remove_reference_t<decltype(field)>>(fields.take(name));
+            field = take<std::remove_reference_t<decltype(field)>>(fields, name);
         });
         return restoring(fields.where(), [&] { return T(p); });
     }
@@ -218,22 +225,25 @@ struct saved_form<T> {
             if constexpr (requires { T::list_name; }) {
                 Json list = Json::array();
                 (list.push_back(to_value<Json>(arguments)), ...);
-                put(content, T::list_name, std::move(list));
+                content[T::list_name] = std::move(list);
             } else if constexpr (requires { T::argument_names; }) {
                 std::size_t i = 0;
-                (put(content, T::argument_names[i++], to_value<Json>(arguments)), ...);
+                (put(content, T::argument_names[i++], arguments), ...);
             }
         });
         return content;
     }
     template <json_value Json>
     static T read(json_fields<Json>& fields) {
-        return read_arguments(fields, static_cast<argument_types*>(nullptr));
+        return read_arguments(fields, static_cast<argument_types*>(nullptr),
+                              typename argument_types::numbers{});
     }
 
 private:
     template <class... Types>
-    struct types {};
+    struct types {
+        using numbers = std::index_sequence_for<Types...>;
+    };
     struct listed {
         template <class... Arguments>
         types<std::remove_cvref_t<Arguments>...> operator()(const Arguments&...) const {
@@ -242,33 +252,22 @@ private:
     };
     using argument_types = decltype(std::declval<const T&>().arguments(listed{}));
 
-    template <json_value Json, class... Types>
-    static T read_arguments(json_fields<Json>& fields, types<Types...>*) {
-        const std::vector<json_field<Json>> values = [&] {
-            if constexpr (requires { T::list_name; }) {
-                return fields.take(T::list_name).list(sizeof...(Types));
-            } else {
-                std::vector<json_field<Json>> taken;
-                if constexpr (requires { T::argument_names; }) {
-                    for (const char* const name : T::argument_names) {
-                        taken.push_back(fields.take(name));
-                    }
+    template <json_value Json, class... Types, std::size_t... I>
+    static T read_arguments(json_fields<Json>& fields, types<Types...>*,
+                            std::index_sequence<I...>) {
+        if constexpr (requires { T::list_name; }) {
+            const std::vector<json_field<Json>> parts =
+                fields.take(T::list_name).list(sizeof...(Types));
+            return restoring(fields.where(), [&] { return T(from_value<Types>(parts[I])...); });
+        } else {
+            return restoring(fields.where(), [&] {
+                if constexpr (requires { &T::from_arguments; }) {
+                    return T::from_arguments(take<Types>(fields, T::argument_names[I])...);
+                } else {
+                    return T(take<Types>(fields, T::argument_names[I])...);
                 }
-                return taken;
-            }
-        }();
-        return make<Types...>(fields.where(), values, std::index_sequence_for<Types...>{});
-    }
-    template <class... Types, json_value Json, std::size_t... I>
-    static T make(const std::string& where, const std::vector<json_field<Json>>& values,
-                  std::index_sequence<I...>) {
-        return restoring(where, [&] {
-            if constexpr (requires { &T::from_arguments; }) {
-                return T::from_arguments(from_value<Types>(values[I])...);
-            } else {
-                return T(from_value<Types>(values[I])...);
-            }
-        });
+            });
+        }
     }
 };
 

@@ -281,6 +281,9 @@ public:
     /// An object's members.
     json_fields(const Json& object, std::string where)
         : object_(&object), where_(std::move(where)) {}
+    json_fields(const json_fields&) = default;
+    json_fields& operator=(const json_fields&) = default;
+    [[gnu::noinline]] ~json_fields() {} // see the head of this file
 
     /// The member of this name, which must be there.
     [[nodiscard, gnu::noinline]] json_field<Json> take(std::string_view name) {
