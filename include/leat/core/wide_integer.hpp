@@ -20,7 +20,8 @@
 
 namespace leat {
 
-/// An unsigned integer below 2^1024.
+/// An unsigned integer below 2^1024. Its arithmetic is not inlined: it is long, and where it is used
+/// calls cost nothing.
 class wide_integer {
 public:
     static constexpr int digit_count = 32;        ///< digits of 32 bits
@@ -54,7 +55,7 @@ public:
     }
 
     /// From decimal text: digits only. Anything else, or 2^1024 and above, is refused.
-    constexpr explicit wide_integer(std::string_view decimal) {
+    [[gnu::noinline]] constexpr explicit wide_integer(std::string_view decimal) {
         if (decimal.empty()) {
             refuse_text(decimal);
         }
@@ -119,7 +120,8 @@ public:
     }
 
     /// The sum; refused from 2^1024 on.
-    friend constexpr wide_integer operator+(wide_integer a, const wide_integer& b) {
+    [[gnu::noinline]] friend constexpr wide_integer operator+(wide_integer a,
+                                                              const wide_integer& b) {
         std::uint64_t carry = 0;
         for (std::size_t i = 0; i < digit_count; ++i) {
             carry += std::uint64_t{a.digits_[i]} + b.digits_[i];
@@ -132,7 +134,8 @@ public:
         return a;
     }
     /// The difference; refused below 0.
-    friend constexpr wide_integer operator-(wide_integer a, const wide_integer& b) {
+    [[gnu::noinline]] friend constexpr wide_integer operator-(wide_integer a,
+                                                              const wide_integer& b) {
         if (a < b) {
             detail::refuse("wide_integer", "a difference would be negative");
         }
@@ -145,7 +148,8 @@ public:
         return a;
     }
     /// The product; refused from 2^1024 on.
-    friend constexpr wide_integer operator*(const wide_integer& a, const wide_integer& b) {
+    [[gnu::noinline]] friend constexpr wide_integer operator*(const wide_integer& a,
+                                                              const wide_integer& b) {
         wide_integer product;
         const std::size_t n = static_cast<std::size_t>(a.size());
         const std::size_t m = static_cast<std::size_t>(b.size());
@@ -166,7 +170,7 @@ public:
         return product;
     }
     /// Times 2^k; refused from 2^1024 on.
-    friend constexpr wide_integer operator<<(const wide_integer& a, unsigned k) {
+    [[gnu::noinline]] friend constexpr wide_integer operator<<(const wide_integer& a, unsigned k) {
         if (a == wide_integer{}) {
             return a;
         }
@@ -186,7 +190,8 @@ public:
         return r;
     }
     /// Divided by 2^k, rounded down.
-    friend constexpr wide_integer operator>>(const wide_integer& a, unsigned k) noexcept {
+    [[gnu::noinline]] friend constexpr wide_integer operator>>(const wide_integer& a,
+                                                               unsigned k) noexcept {
         wide_integer r;
         const std::size_t whole = k / 32;
         for (std::size_t i = 0; i + whole < digit_count; ++i) {
@@ -222,8 +227,8 @@ private:
         return n;
     }
 
-    static constexpr wide_integer divide(const wide_integer& a, const wide_integer& b,
-                                         wide_integer& remainder) {
+    [[gnu::noinline]] static constexpr wide_integer
+    divide(const wide_integer& a, const wide_integer& b, wide_integer& remainder) {
         const std::size_t m = static_cast<std::size_t>(a.size());
         const std::size_t n = static_cast<std::size_t>(b.size());
         if (n == 0) {
