@@ -32,7 +32,8 @@
 
 namespace leat::detail {
 
-/// How a T is saved: write(x), and read(where, fields), which leaves nothing of x out.
+/// How a T is saved: write<Json>(x) gives the content of a document, and read(fields) makes a T of
+/// one. Where the type does not name itself (type_name.hpp), also `name`.
 template <class T>
 struct saved_form;
 
@@ -54,6 +55,7 @@ inline constexpr bool is_optional = false;
 template <class T>
 inline constexpr bool is_optional<std::optional<T>> = true;
 
+/// An argument as a value in a document.
 template <json_value Json, class T>
 Json to_value(const T& x) {
     if constexpr (std::same_as<T, bool>) {
@@ -82,6 +84,7 @@ Json to_value(const T& x) {
     }
 }
 
+/// The argument that a value stands for.
 template <class T, json_value Json>
 T from_value(const json_field<Json>& field) {
     if constexpr (std::same_as<T, bool>) {
