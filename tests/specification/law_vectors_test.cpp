@@ -2,6 +2,12 @@
 // tests/specification/second_laws.py wrote from tests/golden/LAWS.md. Values to the bit, and the
 // words they consume.
 
+#include "leat/core/arctangent.hpp"
+#include "leat/core/exponential.hpp"
+#include "leat/core/log_gamma.hpp"
+#include "leat/core/logarithm.hpp"
+#include "leat/core/power.hpp"
+#include "leat/core/sine_cosine.hpp"
 #include "leat/distributions/beta.hpp"
 #include "leat/distributions/cauchy.hpp"
 #include "leat/distributions/chi_squared.hpp"
@@ -26,6 +32,7 @@
 #include "leat/distributions/von_mises.hpp"
 #include "leat/distributions/weibull.hpp"
 #include "leat/streams/source.hpp"
+#include "leat/uniform/open_interval.hpp"
 #include "leat/uniform/permute.hpp"
 
 #include <gtest/gtest.h>
@@ -38,6 +45,7 @@
 #include <cstdio>
 #include <fstream>
 #include <limits>
+#include <map>
 #include <numeric>
 #include <set>
 #include <string>
@@ -115,6 +123,11 @@ struct section {
     draw as_float;
 };
 
+template <leat::ends Ends>
+constexpr section uniform(const char* name) {
+    return {name, draw_of<leat::uniform<double, Ends>>, draw_of<leat::uniform<float, Ends>>};
+}
+
 template <template <class> class Law>
 constexpr section law(const char* name) {
     return {name, draw_of<Law<double>>, draw_of<Law<float>>};
@@ -162,6 +175,10 @@ const section sections[] = {
     law<leat::student_t>("student_t"),
     law<leat::triangular>("triangular"),
     law<leat::truncated_normal>("truncated_normal"),
+    uniform<leat::ends::open>("uniform"),
+    uniform<leat::ends::closed>("uniform.closed"),
+    uniform<leat::ends::closed_open>("uniform.closed_open"),
+    uniform<leat::ends::open_closed>("uniform.open_closed"),
     law<leat::von_mises>("von_mises"),
     law<leat::weibull>("weibull"),
 };
@@ -198,8 +215,54 @@ TEST(LawVectors, EveryRowToTheBit) {
         EXPECT_TRUE(in_float) << "no row of floats";
     }
     for (const auto& [name, rows] : file.items()) {
-        EXPECT_TRUE(names.contains(name)) << name << " is not checked";
+        EXPECT_TRUE(names.contains(name) || name.starts_with("function "))
+            << name << " is not checked";
     }
+}
+
+/// A function of one or two reals, with one or two values.
+using function = json (*)(double x, double y);
+
+const std::map<std::string, function> functions = {
+    {"arctangent", [](double y, double x) { return json{bits(leat::detail::arctangent(y, x))}; }},
+    {"exp", [](double x, double) { return json{bits(leat::detail::natural_exp(x))}; }},
+    {"expm1", [](double x, double) { return json{bits(leat::detail::exp_minus_one(x))}; }},
+    {"log1p", [](double x, double) { return json{bits(leat::detail::log_one_plus(x))}; }},
+    {"log_gamma", [](double x, double) { return json{bits(leat::detail::log_gamma(x))}; }},
+    {"log_parts",
+     [](double x, double) {
+         const leat::detail::two_part log = leat::detail::log_parts(x);
+         return json{bits(log.high), bits(log.low)};
+     }},
+    {"power", [](double x, double y) { return json{bits(leat::detail::power(x, y))}; }},
+    {"sine_cosine",
+     [](double x, double) {
+         const leat::detail::sine_and_cosine both = leat::detail::sine_cosine(x);
+         return json{bits(both.sine), bits(both.cosine)};
+     }},
+};
+
+TEST(LawVectors, CoreMathsToTheBit) {
+    const json file = vectors();
+    std::size_t found = 0;
+    for (const auto& [name, rows] : file.items()) {
+        if (!name.starts_with("function ")) {
+            continue;
+        }
+        ++found;
+        SCOPED_TRACE(name);
+        const function f = functions.at(name.substr(9));
+        const json& arguments = rows.at(0).at("arguments");
+        const json& values = rows.at(0).at("values");
+        ASSERT_GT(values.size(), 100u);
+        ASSERT_EQ(arguments.size(), values.size());
+        for (std::size_t i = 0; i < values.size(); ++i) {
+            const auto x = parameter<double>(arguments[i].at(0));
+            const double y = arguments[i].size() > 1 ? parameter<double>(arguments[i].at(1)) : 0.0;
+            EXPECT_EQ(f(x, y), values[i]) << arguments[i];
+        }
+    }
+    EXPECT_EQ(found, functions.size());
 }
 
 } // namespace

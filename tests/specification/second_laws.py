@@ -12,9 +12,10 @@ import math
 import os
 import struct
 import sys
+from fractions import Fraction
 
+import alias_table
 import core_maths as maths
-import second_discrete as discrete
 import second_implementation as base
 from core_maths import exp, exp_scaled, inverse, log, log1p, product, quotient, shortened, split
 from core_maths import times, value
@@ -144,8 +145,31 @@ class Laws:
 
     # Location and scale
 
+    def uniform(self, a, b, ends="open"):
+        word = self.s() if self.real == "double" else self.s() >> 32
+        x = Fraction(a) + (Fraction(b) - Fraction(a)) * base.unit(word, self.real, ends)
+        digits = base.FORMATS[self.real][0]
+        x = float((-1 if x < 0 else 1) * base.nearest(abs(x), digits))
+        if x == a and ends in ("open", "open_closed"):
+            self.met("at a")
+            return up(a, self.real)
+        if x == b and ends in ("open", "closed_open"):
+            self.met("at b")
+            return -up(-b, self.real)
+        return x
+
+    def uniform_closed_open(self, a, b):
+        return self.uniform(a, b, "closed_open")
+
+    def uniform_open_closed(self, a, b):
+        return self.uniform(a, b, "open_closed")
+
+    def uniform_closed(self, a, b):
+        return self.uniform(a, b, "closed")
+
     def normal(self, mean, sd):
-        return self.into(mean + sd * self.z())
+        x = mean + sd * self.z()
+        return mean if sd == 0 else self.into(x)
 
     def exponential(self, rate):
         return self.into(self.e() / rate)
@@ -233,7 +257,7 @@ class Laws:
                 u = self.u()
                 if u < 1 - square * square * 0.0331:
                     return root * root * root
-                if log(u) < into(3 * d, "double") * log_beyond_cube(t):
+                if log(u) < into(3 * d, "double") * discrete.log_beyond_cube(t):
                     self.met("logarithm, series" if abs(t) < 1 / 16 else "logarithm")
                     return root * root * root
                 self.met("rejected")
@@ -446,7 +470,7 @@ class Laws:
             else:
                 areas.append(0.0)
                 lines.append((0.5, 0.5))
-        i = discrete.categorical(discrete.Draw(self.s), areas)
+        i, _ = alias_table.draw(areas, self.s)
         left, right = lines[i]
         u = self.u()
         t = u / (left + math.sqrt((1 - u) * (left * left) + u * (right * right)))
@@ -552,22 +576,22 @@ def gamma_unit(shape):
     return 1.0 if shape < 1 else float(shape)
 
 
-def log_beyond_cube(t):
-    if abs(t) < 1 / 16:
-        total = 0.0
-        for n in range(16, 3, -1):
-            total = 1 / n - t * total
-        return -(t * t * t * t * total)
-    return log1p(t) - (t - t * t * (0.5 - t / 3))
-
-
 # ---- Vectors ----
 
 # Parameters, the word to begin at, how many draws; "float" where the law is one of floats (its
 # parameters are floats then). The rows that begin later than at word 0 reach a rare branch.
 ROWS = {
+    "uniform": [([-1.5, 7.25], 0, 6), ([1.0, 1.0 + 2.0 ** -51], 0, 6), ([-1e308, 7e307], 0, 6),
+                ([0.0, 1e-280], 0, 6), ([1e-3, 1e3], 0, 6), ([-0.5, 3.0], 0, 6, "float"),
+                ([2.0, 2.0 + 2.0 ** -21], 0, 6, "float")],
+    "uniform.closed_open": [([-1.5, 7.25], 0, 6), ([1.0, 1.0 + 2.0 ** -52], 0, 6),
+                            ([-0.5, 3.0], 0, 6, "float")],
+    "uniform.open_closed": [([-1.5, 7.25], 0, 6), ([1.0, 1.0 + 2.0 ** -52], 0, 6),
+                            ([-0.5, 3.0], 0, 6, "float")],
+    "uniform.closed": [([-1.5, 7.25], 0, 6), ([1.0, 1.0 + 2.0 ** -52], 0, 6),
+                       ([0.0, 1e-280], 0, 6), ([-0.5, 3.0], 0, 6, "float")],
     "normal": [([-3.7, 12.1], 0, 6), ([1e308, 1e308], 0, 6), ([0.5, 2.25], 0, 6, "float"),
-               ([0.0, 2.0 ** 126], 0, 6, "float")],
+               ([0.0, 2.0 ** 126], 0, 6, "float"), ([0.0, 0.0], 0, 3)],
     "exponential": [([0.3], 0, 6), ([1e-308], 0, 6), ([1e-308], 10, 2), ([1e308], 0, 6),
                     ([0.25], 0, 6, "float"), ([2.0 ** 126], 0, 6, "float"),
                     ([2.0 ** -140], 0, 6, "float")],
@@ -659,6 +683,9 @@ ROWS = {
 
 # What the rows of a law reach together.
 REACHED = {
+    "uniform": "at a; at b",
+    "uniform.closed_open": "at b",
+    "uniform.open_closed": "at a",
     "normal": "above range",
     "exponential": "above range; below range",
     "laplace": "above range",
@@ -696,8 +723,49 @@ def as_stored(x, real):
     return x if isinstance(x, int) else base.bits(x, real)
 
 
+# Arguments of the functions, and a hundred more each, words of a stream over `points`.
+FUNCTIONS = {
+    "exp": (maths.exp, [0.0, 1e-300, 40.5, 709.78, 709.79, -708.39, -708.4, -745.2, 1999.0, -1999.0,
+                        2000.0, -2000.0, 1e300, -1e300], lambda u: 1400 * u - 700),
+    "expm1": (maths.expm1, [0.0, 2.0 ** -54, -(2.0 ** -55), 1e-300, -40.0, -40.1, 40.0, 40.1,
+                            800.0],
+              lambda u: 80 * u - 40),
+    "log_parts": (maths.log_parts, [1.0, 5e-324, 2.0 ** -1022, MOST["double"], 1 - 2.0 ** -53,
+                                    1 + 2.0 ** -52, 0.701171875, 1.40234375, 1e300],
+                  lambda u: 10 * u),
+    "log1p": (maths.log1p, [0.0, 2.0 ** -54, -(2.0 ** -55), -1 + 2.0 ** -53, 1e300],
+              lambda u: 4 * u - 1),
+    "power": (maths.power, [(2.0, 0.5), (1.0, INFINITY), (0.5, INFINITY), (3.0, 1e300),
+                            (3.0, -1e300), (7.0, 1e-300), (1.5, -0.0), (1 + 2.0 ** -52, 2.0 ** 52)],
+              lambda u: (10 * u, 600 * u - 300)),
+    "sine_cosine": (sine_cosine, [0.0, 0.125, 0.25, 0.5, 0.75, -0.25, 1 / 256, 1e-200, 1e6 + 0.3],
+                    lambda u: 4 * u - 2),
+    "arctangent": (arctangent, [(0.0, 0.0), (0.0, 1.0), (1.0, 0.0), (1.0, 1.0), (1e-310, 1.0),
+                                (1e-9, 1.0), (1 / 32, 1.0), (1e300, 1e299), (1e-300, 1e300)],
+                   lambda u: (u, 1 - u)),
+    "log_gamma": (maths.log_gamma, [1.0, 2.0, 0.5, 1e-300, 9.999, 10.0, 1e15, 1e300],
+                  lambda u: 12 * u),
+}
+
+
+def function_row(name):
+    function, arguments, points = FUNCTIONS[name]
+    s = base.Stream.open(20261201, ["function", name])
+    arguments = arguments + [points(float(base.unit(s(), "double", "open"))) for _ in range(100)]
+
+    def listed(x):
+        return list(x) if isinstance(x, tuple) else [x]
+
+    return {"arguments": [[stored_argument(y) for y in listed(x)] for x in arguments],
+            "values": [[base.bits(y) for y in listed(function(*listed(x)))] for x in arguments]}
+
+
+def stored_argument(x):
+    return "infinity" if x == INFINITY else x
+
+
 def computed():
-    result = {}
+    result = {"function " + name: [function_row(name)] for name in FUNCTIONS}
     for name, rows in ROWS.items():
         result[name] = []
         for index, (parameters, start, count, *real) in enumerate(rows):
@@ -731,7 +799,7 @@ def main():
         kept = json.load(f)
     failures = checks = 0
     for name, rows in mine.items():
-        reached = set().union(*(row["branches"] for row in rows))
+        reached = set().union(*(row.get("branches", []) for row in rows))
         for problem, found in (("rows are missing", len(kept.get(name, [])) != len(rows)),
                                ("branches reached: %s" % sorted(reached),
                                 reached != set(REACHED.get(name, "").split("; ")) - {""})):
