@@ -257,7 +257,7 @@ class Laws:
                 u = self.u()
                 if u < 1 - square * square * 0.0331:
                     return root * root * root
-                if log(u) < into(3 * d, "double") * discrete.log_beyond_cube(t):
+                if log(u) < into(3 * d, "double") * log_beyond_cube(t):
                     self.met("logarithm, series" if abs(t) < 1 / 16 else "logarithm")
                     return root * root * root
                 self.met("rejected")
@@ -574,6 +574,15 @@ def gamma_constants(shape):
 
 def gamma_unit(shape):
     return 1.0 if shape < 1 else float(shape)
+
+
+def log_beyond_cube(t):
+    if abs(t) < 1 / 16:
+        total = 0.0
+        for n in range(16, 3, -1):
+            total = 1 / n - t * total
+        return -(t * t * t * t * total)
+    return log1p(t) - (t - t * t * (0.5 - t / 3))
 
 
 # ---- Vectors ----
