@@ -131,7 +131,7 @@ const std::map<std::string, law_row>& laws() {
          {[](const json& p) {
               return integers(leat::negative_binomial<>(p[0].get<double>(), p[1].get<double>()));
           },
-          {"beyond the type", "gamma, logarithm", "gamma, rejected", "gamma, shape below 1"}}},
+          {"beyond the type", "gamma, boost", "gamma, logarithm", "gamma, rejected"}}},
         {"hypergeometric",
          {[](const json& p) {
               return integers(leat::hypergeometric<>(p[0].get<int64_t>(), p[1].get<int64_t>(),
@@ -156,7 +156,7 @@ const std::map<std::string, law_row>& laws() {
           {"exactly 0", "singular"}}},
         {"dirichlet",
          {[](const json& p) { return vectors(leat::dirichlet(p[0].get<reals>())); },
-          {"gamma, logarithm", "gamma, rejected", "gamma, shape below 1"}}},
+          {"gamma, boost", "gamma, logarithm", "gamma, rejected"}}},
         {"multinomial",
          {[](const json& p) {
               return integers(leat::multinomial<>(p[0].get<int64_t>(), p[1].get<reals>()));

@@ -18,8 +18,10 @@ import os
 import sys
 from fractions import Fraction
 
+import alias_table
 import core_maths as core
 import second_implementation as base
+import second_laws
 
 M64 = base.M64
 INT64_MAX = 2 ** 63 - 1
@@ -249,61 +251,19 @@ def binomial(d, n, p):
     return n - binomial_count(d, n, 1.0 - p) if p > 0.5 else binomial_count(d, n, p)
 
 
-# ---- negative_binomial, and the gamma variates of it and of dirichlet ----
+# ---- negative_binomial ----
 
 
-def log_beyond_cube(t):
-    if abs(t) < 2.0 ** -4:
-        total = 0.0
-        for n in range(16, 3, -1):
-            total = 1.0 / float(n) - t * total
-        return -((((t * t) * t) * t) * total)
-    return core.log1p(t) - (t - (t * t) * (0.5 - t / 3.0))
-
-
-def gamma_factor(d, shape):
-    """d and (1 + c z)^3, for a shape >= 1."""
-    size = shape - 1 / 3
-    c = 1.0 / (3.0 * math.sqrt(size))
-    while True:
-        z = d.normal()
-        t = z * c
-        root = 1.0 + t
-        if not root > 0:
-            continue
-        square = z * z
-        u = d.open_unit()
-        if u < 1.0 - (square * square) * 0.0331:
-            return size, (root * root) * root
-        if core.log(u) < (3.0 * size) * log_beyond_cube(t):
-            d.met("gamma, logarithm")
-            return size, (root * root) * root
-        d.met("gamma, rejected")
-
-
-def unit_gamma(d, shape):
-    """gamma{shape, 1}."""
-    size, factor = gamma_factor(d, shape + 1.0 if shape < 1 else shape)
-    if shape >= 1:
-        return size * factor
-    d.met("gamma, shape below 1")
-    e = d.exponential()
-    return core.value(core.times(core.split(factor), core.split(size),
-                                 core.exp_scaled(-e / shape)))
-
-
-def log_unit_gamma(d, shape):
-    """gamma{shape, 1}.draw_log."""
-    size, factor = gamma_factor(d, shape + 1.0 if shape < 1 else shape)
-    result = core.log(factor) + (core.log(size) + core.log(1.0))
-    if shape < 1:
-        d.met("gamma, shape below 1")
-        result = result - d.exponential() / shape
-    return core.into_signed(result)
+def unit_gamma(d, shape, law):
+    """A draw of `law`, gamma or gamma_draw_log, of scale 1."""
+    gammas = second_laws.Laws(d.s, "double")
+    result = getattr(gammas, law)(shape, 1.0)
+    d.branches |= {"gamma, " + branch for branch in gammas.branches}
+    return result
 
 
 def negative_binomial(d, r, p):
-    rate = unit_gamma(d, r)
+    rate = unit_gamma(d, r, "gamma")
     mean = core.product(rate, (1.0 - p) / p)
     if not mean < 2.0 ** 63:
         d.met("beyond the type")
@@ -457,43 +417,11 @@ def zipf(d, s, n):
 
 
 def categorical(d, weights):
-    whole_exponent = core.split(max(weights))[1] - 94
-    whole = [math.floor(Fraction(w) / Fraction(2) ** whole_exponent) for w in weights]
-    total = sum(whole)
-    n = len(weights)
-    bits = max(1, (n - 1).bit_length())
-    rest_bits = 64 - bits
-    full = 2 ** rest_bits
-    running, before, counts = 0, 0, []
-    for w in whole:
-        running += w
-        upto = 2 ** 64 * running // total
-        counts.append(upto - before)
-        before = upto
-
-    if 2 ** 64 in counts:
+    outcome, own = alias_table.draw(weights, d.s)
+    d.met("own" if own else "alias")
+    if 2 ** 64 in alias_table.words_of_outcomes(weights):
         d.met("one takes all")
-        table = [(counts.index(2 ** 64), 0)] * 2 ** bits
-    else:
-        counts += [0] * (2 ** bits - n)
-        table = [(j, 0) for j in range(2 ** bits)]
-        rich = 0
-        for first in range(2 ** bits):
-            j = first
-            while counts[j] < full:
-                while counts[rich] <= full:
-                    rich += 1
-                table[j] = rich, counts[j]
-                counts[rich] -= full - counts[j]
-                counts[j] = full
-                if rich > first:
-                    break
-                j = rich
-    word = d.s()
-    own, rest = divmod(word, full)
-    alias, threshold = table[own]
-    d.met("own" if rest < threshold else "alias")
-    return own if rest < threshold else alias
+    return outcome
 
 
 def weighted_index(d, weights, updates):
@@ -571,7 +499,7 @@ def multivariate_normal(d, mean, covariance):
 
 
 def dirichlet(d, alpha):
-    logs = [log_unit_gamma(d, a) for a in alpha]
+    logs = [unit_gamma(d, a, "gamma_draw_log") for a in alpha]
     largest = max(logs)
     x = [core.exp(y - largest) for y in logs]
     total = 0.0
