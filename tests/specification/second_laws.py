@@ -1,5 +1,5 @@
 #!/usr/bin/env python3
-"""The continuous laws, random order and choice, written again from tests/golden/LAWS.md.
+"""The continuous laws, random order and choice of tests/golden/LAWS.md, a second time.
 
 Run without arguments it checks every row of tests/golden/law_vectors.json; with --write it computes
 the expected values and writes the file, so that the library (law_vectors_test.cpp) is tested
