@@ -60,13 +60,13 @@ template <json_value Json>
     const auto number = saved_version.template integer<std::uint64_t>();
     if (number > version) {
         message m;
-        m.text("must be at most ").value(static_cast<unsigned long long>(version));
+        m.text("must be at most ").value(version);
         saved_version.refuse(
             m.text(": it was saved by a later version of leat; restore it with that").c_str());
     }
     if (number != version) {
         message m;
-        m.text("must be ").value(static_cast<unsigned long long>(version));
+        m.text("must be ").value(version);
         saved_version.refuse(m.c_str());
     }
     const json_field<Json> saved_sum = fields.take("checksum");

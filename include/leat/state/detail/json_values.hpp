@@ -95,7 +95,7 @@ public:
         if (!value_->is_string() || !parse(text(), x) || x > max) {
             message m;
             refuse(m.text("must be the decimal digits, as a text, of a whole number from 0 to ")
-                       .value(static_cast<unsigned long long>(max))
+                       .value(max)
                        .c_str());
         }
         return x;
@@ -128,8 +128,8 @@ public:
             (negative && !std::signed_integral<Int>)) {
             message m;
             m.text("must be a whole number from ");
-            m.value(static_cast<long long>(std::numeric_limits<Int>::min())).text(" to ");
-            refuse(m.value(static_cast<unsigned long long>(most)).c_str());
+            m.value(std::int64_t{std::numeric_limits<Int>::min()}).text(" to ");
+            refuse(m.value(most).c_str());
         }
         return static_cast<Int>(negative ? 0 - size : size);
     }
