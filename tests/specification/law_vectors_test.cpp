@@ -1,6 +1,6 @@
 // The library against the second implementation: every row of tests/golden/law_vectors.json, which
-// tests/specification/second_laws.py wrote by tests/golden/LAWS.md. Values to the bit, and the words
-// they consume.
+// tests/specification/second_laws.py wrote by tests/golden/LAWS.md. Values to the bit, and the
+// words they consume.
 
 #include "leat/core/arctangent.hpp"
 #include "leat/core/exponential.hpp"
