@@ -1,5 +1,5 @@
 // The library against the second implementation: every row of tests/golden/discrete_vectors.json,
-// which tests/specification/second_discrete.py wrote from tests/golden/LAWS_DISCRETE.md.
+// which tests/specification/second_discrete.py wrote by tests/golden/LAWS_DISCRETE.md.
 
 #include "leat/distributions/bernoulli.hpp"
 #include "leat/distributions/binomial.hpp"
