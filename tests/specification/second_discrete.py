@@ -17,6 +17,7 @@ import math
 import os
 import sys
 from fractions import Fraction
+from math import floor  # exact
 
 import alias_table
 import core_maths as core
@@ -27,16 +28,11 @@ M64 = base.M64
 INT64_MAX = 2 ** 63 - 1
 
 
-def floor(x):
-    """The largest integer up to a double, exactly."""
-    return math.floor(x)
-
-
 class Draw(base.Law):
     """Draws from the words of one stream; `branches` collects what was met on the way."""
 
-    def open_unit(self, word=None):
-        return float(base.unit(self.s() if word is None else word, "double", "open"))
+    def open_unit(self):
+        return float(base.unit(self.s(), "double", "open"))
 
     def met(self, branch):
         self.branches.add(branch)
@@ -52,7 +48,7 @@ def bernoulli(d, p):
     rest = Fraction(p)
     while True:
         word = d.s()
-        digits = math.floor(rest * 2 ** 64)
+        digits = floor(rest * 2 ** 64)
         if word != digits:
             return word < digits
         rest = rest * 2 ** 64 - digits
