@@ -1,4 +1,5 @@
-// The driver for std::jthread: a counter that every thread takes its next replication from.
+// The driver for std::jthread: a counter that every thread takes its next replication from, the
+// calling one included.
 
 #include <algorithm>
 #include <atomic>
@@ -17,15 +18,16 @@ void run_on_jthread(const replication_function& run, collector& rows, int thread
             attempt(run, rows, tasks[i]);
         }
     };
-    std::vector<std::jthread> workers; // joined where the function ends
+    std::vector<std::jthread> others; // joined where the function ends
     try {
-        for (std::size_t w = 0; w < std::min(static_cast<std::size_t>(threads), tasks.size());
-             ++w) {
-            workers.emplace_back(work);
+        const std::size_t wanted = std::min(static_cast<std::size_t>(threads), tasks.size());
+        while (others.size() + 1 < wanted) {
+            others.emplace_back(work);
         }
     } catch (const std::system_error& e) {
         rows.stop("cannot start " + std::to_string(threads) + " threads: " + e.what());
     }
+    work();
 }
 
 } // namespace skerry
