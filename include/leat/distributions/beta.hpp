@@ -2,15 +2,17 @@
 // unknown probabilities, order statistics of uniforms.
 //
 // Domain: a and b finite and >= 1e-300 (below, the logarithms of the variates themselves pass the
-// range of double); anything else throws invalid_parameter. By region, whichever is fastest:
+// range of double); anything else throws invalid_parameter. By region, whichever is fastest, the
+// first that fits:
 //   b = 1 or a = 1     e^(-E/a) or 1 - e^(-E/b), E exponential                   1.03 word64
+//   1/2 and 1 up       both shapes 1/2 or at least 1: as `others`, not in logarithms
 //   a + b <= 1         Johnk's rejection in logarithms, x = e^(-E1/a), y = e^(-E2/b), accepted
 //                      where x + y <= 1: 2.06 to 2.65 word64; at most 64 trials, then
 //                      engine_stuck (a chance below 2^-140)
 //   others             G1 / (G1 + G2) of two gamma variates: 2.04 (a = b = 1/2) to 4.2 word64; up
 //                      to 6.4 with shapes below 1
-// All in logarithms where a shape is below 1. No draw is 0 or 1: results below the smallest normal
-// number are given as that, results that round to 1 as the largest number below. A float is
+// In logarithms where a shape is below 1 and not 1/2. No draw is 0 or 1: results below the smallest
+// normal number are given as that, results that round to 1 as the largest number below. A float is
 // computed as a double and rounded.
 // Source: M. D. Johnk, Erzeugung von betaverteilten und gammaverteilten Zufallszahlen, Metrika 8,
 // 1964; L. Devroye, Non-Uniform Random Variate Generation, 1986, ch. IX.3 and IX.4; the gamma

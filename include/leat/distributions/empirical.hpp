@@ -6,11 +6,10 @@
 // Domain: 1 value or more, each finite; anything else throws invalid_parameter, which names the
 // entry. A value that occurs k times is drawn k times as often. The law holds the values in
 // ascending order, so `param()` has them so too, whatever their order was. A draw is
-// values[below(n)]: one word64 (two with a chance below n / 2^64), in constant time, and the law is
-// exact. Constructing takes n log n, moments and `cumulative` and `quantile` at most n.
-// Source: by its definition (B. Efron, Bootstrap methods, Ann. Statist. 7(1), 1979).
-// Not for values with weights (categorical, as an index), nor for a smooth density through them
-// (piecewise_linear).
+// values[below(n)]: one word32 or word64 (see uniform_integer.hpp), in constant time, and the law
+// is exact. Constructing takes n log n, moments and `cumulative` and `quantile` at most n. Source:
+// by its definition (B. Efron, Bootstrap methods, Ann. Statist. 7(1), 1979). Not for values with
+// weights (categorical, as an index), nor for a smooth density through them (piecewise_linear).
 
 #ifndef LEAT_DISTRIBUTIONS_EMPIRICAL_HPP
 #define LEAT_DISTRIBUTIONS_EMPIRICAL_HPP

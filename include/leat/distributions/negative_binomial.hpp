@@ -3,7 +3,8 @@
 // k = 0, 1, 2, ... Also counts that vary more than Poisson's do.
 //
 // Domain: r finite and > 0 (tested from 1e-6 to 1e9), 0 < p <= 1, and such that a draw passes the
-// integer type with a chance of at most 2^-64; anything else throws invalid_parameter. p = 1 gives
+// integer type with a chance of at most 2^-64 (for p below 2^-53 by a bound, which asks a little
+// more); anything else throws invalid_parameter. p = 1 gives
 // 0. A draw is a Poisson count whose mean is a gamma draw of shape r and scale (1 - p) / p; one
 // beyond the type is given as its largest value.
 // Words consumed: those of gamma and of the Poisson count, 3.1 to 6 word64 on average; engine_stuck
