@@ -20,8 +20,8 @@
 
 namespace leat {
 
-/// An unsigned integer below 2^1024. Its arithmetic is not inlined: it is long, and where it is used
-/// calls cost nothing.
+/// An unsigned integer below 2^1024. Its arithmetic is not inlined: it is long, and calls cost
+/// little beside it.
 class wide_integer {
 public:
     static constexpr int digit_count = 32;        ///< digits of 32 bits

@@ -6,10 +6,9 @@
 // within rounding (detail/covariance_factor.hpp has the tolerances), each variance 0 or at least
 // 2^-1000. Anything else throws invalid_parameter, which names the entry. A draw is mean + D L z,
 // z one standard normal for each dimension that the covariance spans, `rank()` of them: so many
-// word64 and 2 % more. A draw that comes out as 0 is given as the smallest normal number, but
-// for components without variance. Draws of
-// a singular law keep to its plane but for rounding. Constructing takes some n^3 operations, a
-// draw n times the rank.
+// word64 and 2 % more. A draw that comes out as 0 is given as the smallest normal number, but for
+// components without variance. Draws of a singular law keep to its plane but for rounding.
+// Constructing takes some n^3 operations, a draw n times the rank.
 // Source: A = L L' by Cholesky's method with pivoting (N. J. Higham, Accuracy and Stability of
 // Numerical Algorithms, 2nd ed. 2002, 10.3); z: see `normal`.
 // Not for independent components (normal, faster).
