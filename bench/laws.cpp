@@ -24,6 +24,31 @@ void compare(const std::string& law, Ours ours, Standard standard, Gsl gsl) {
     add_ours<element>(law, ours);
 }
 
+/// gamma made anew for each draw, as by a program whose parameters always change.
+struct fresh_gamma {
+    using result_type = double;
+    double shape;
+
+    template <class G>
+    double operator()(G& g) const {
+        double any_shape = shape;
+        benchmark::DoNotOptimize(any_shape); // the compiler must not know that it stays
+        return leat::gamma<double>{any_shape, 1.0}(g);
+    }
+};
+
+/// The same with the standard law.
+struct fresh_standard_gamma {
+    double shape;
+
+    template <class G>
+    double operator()(G& g) const {
+        double any_shape = shape;
+        benchmark::DoNotOptimize(any_shape);
+        return std::gamma_distribution<double>{any_shape, 1}(g);
+    }
+};
+
 /// An array of normals shared by some threads.
 void add_chunks(const std::string& entry, unsigned threads) {
     add<double>(
@@ -61,6 +86,13 @@ const bool registered = [] {
             [](gsl_rng* g) { return gsl_ran_gamma(g, 2.5, 1); });
     compare("gamma, shape 0.3", leat::gamma{0.3, 1}, std::gamma_distribution<double>{0.3, 1},
             [](gsl_rng* g) { return gsl_ran_gamma(g, 0.3, 1); });
+
+    compare("gamma, new parameters", fresh_gamma{2.5}, fresh_standard_gamma{2.5},
+            [](gsl_rng* g) { return gsl_ran_gamma(g, 2.5, 1); });
+    compare("chi_squared, 6.5", leat::chi_squared{6.5}, std::chi_squared_distribution<double>{6.5},
+            [](gsl_rng* g) { return gsl_ran_chisq(g, 6.5); });
+    compare("student_t, 4.5", leat::student_t{4.5}, std::student_t_distribution<double>{4.5},
+            [](gsl_rng* g) { return gsl_ran_tdist(g, 4.5); });
 
     add_chunks("1 thread", 1);
     add_chunks("2 threads", 2);
