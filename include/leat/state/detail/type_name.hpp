@@ -131,7 +131,7 @@ struct engine_arguments<Adaptor<Engine>> {
     static void list(name_arguments& all) { all.add_type<Engine>(); }
 };
 
-template <template <class, std::size_t> class Adaptor, class Engine, std::size_t K>
+template <template <class, std::size_t> class Adaptor, named_engine Engine, std::size_t K>
 struct engine_arguments<Adaptor<Engine, K>> {
     static void list(name_arguments& all) {
         all.add_type<Engine>();
