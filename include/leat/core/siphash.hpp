@@ -15,6 +15,7 @@
 #include <array>
 #include <bit>
 #include <cstdint>
+#include <string_view>
 
 namespace leat::detail {
 
@@ -32,6 +33,24 @@ public:
     constexpr void absorb(std::uint64_t word) noexcept {
         compress(word);
         ++words_;
+    }
+
+    /// Appends a text: 3 and its length as a word, then eight bytes a word, the first one lowest.
+    constexpr void absorb_text(std::string_view text) noexcept {
+        absorb(3 + 256 * std::uint64_t{text.size()});
+        std::uint64_t word = 0;
+        unsigned filled = 0;
+        for (const char c : text) {
+            word |= std::uint64_t{static_cast<unsigned char>(c)} << (8 * filled);
+            if (++filled == 8) {
+                absorb(word);
+                word = 0;
+                filled = 0;
+            }
+        }
+        if (filled != 0) {
+            absorb(word);
+        }
     }
 
     /// The hash of all words so far; the state itself is left as it is.

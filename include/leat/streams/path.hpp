@@ -176,20 +176,7 @@ private:
             hash_.absorb(item.magnitude);
             return;
         }
-        hash_.absorb(3 + 256 * std::uint64_t{item.text.size()});
-        std::uint64_t word = 0;
-        unsigned filled = 0;
-        for (const char c : item.text) {
-            word |= std::uint64_t{static_cast<unsigned char>(c)} << (8 * filled);
-            if (++filled == 8) {
-                hash_.absorb(word);
-                word = 0;
-                filled = 0;
-            }
-        }
-        if (filled != 0) {
-            hash_.absorb(word);
-        }
+        hash_.absorb_text(item.text);
     }
 
     siphash hash_ = start();

@@ -76,7 +76,7 @@ private:
                 take(entry, depth + 1);
             }
         } else if (value.is_string()) {
-            take_text(*value.template get_ptr<const typename Json::string_t*>());
+            hash_.absorb_text(*value.template get_ptr<const typename Json::string_t*>());
         } else if (value.is_number()) {
             hash_.absorb(2);
             hash_.absorb(std::bit_cast<std::uint64_t>(value.template get<double>()));
@@ -99,25 +99,8 @@ private:
                   [](const auto& a, const auto& b) { return a.first < b.first; });
         hash_.absorb(5 + 256 * std::uint64_t{members.size()});
         for (const auto& [name, value] : members) {
-            take_text(name);
+            hash_.absorb_text(name);
             take(*value, depth + 1);
-        }
-    }
-
-    void take_text(std::string_view text) {
-        hash_.absorb(3 + 256 * std::uint64_t{text.size()});
-        std::uint64_t word = 0;
-        unsigned filled = 0;
-        for (const char c : text) {
-            word |= std::uint64_t{static_cast<unsigned char>(c)} << (8 * filled);
-            if (++filled == 8) {
-                hash_.absorb(word);
-                word = 0;
-                filled = 0;
-            }
-        }
-        if (filled != 0) {
-            hash_.absorb(word);
         }
     }
 
