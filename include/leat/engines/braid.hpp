@@ -177,9 +177,9 @@ public:
 
     /// Skips n words, in O(log n). Like advance a template, so that only a program that jumps
     /// compiles the derivation of xoshiro256's characteristic polynomial.
-    template <int = 0>
+    template <class Step = detail::xoshiro256_step>
     constexpr void discard(unsigned long long n) {
-        advance(wide_integer{n});
+        advance<Step>(wide_integer{n});
     }
 
     /// Skips any number of words, below the period or not, in time logarithmic in it: whole rounds
