@@ -31,9 +31,8 @@ struct fresh_gamma {
 
     template <class G>
     double operator()(G& g) const {
-        double any_shape = shape;
-        benchmark::DoNotOptimize(any_shape); // the compiler must not know that it stays
-        return leat::gamma<double>{any_shape, 1.0}(g);
+        const volatile double any_shape = shape; // the compiler must not know that it stays
+        return leat::gamma<double>{double{any_shape}, 1.0}(g);
     }
 };
 
@@ -43,8 +42,7 @@ struct fresh_standard_gamma {
 
     template <class G>
     double operator()(G& g) const {
-        double any_shape = shape;
-        benchmark::DoNotOptimize(any_shape);
+        const volatile double any_shape = shape;
         return std::gamma_distribution<double>{any_shape, 1}(g);
     }
 };
