@@ -24,43 +24,24 @@
 #include "leat/core/concepts.hpp"
 #include "leat/core/error_free.hpp" // magnitude
 #include "leat/core/errors.hpp"
-#include "leat/core/exponential.hpp"
 #include "leat/core/scaled.hpp"
 #include "leat/core/square_root.hpp"
 #include "leat/distributions/detail/evaluate.hpp"
 #include "leat/distributions/detail/into_range.hpp"
 #include "leat/distributions/detail/law.hpp"
 #include "leat/distributions/detail/normal_mass.hpp"
-#include "leat/distributions/detail/quadrature.hpp" // the moments
+#include "leat/distributions/detail/quadrature.hpp"
+#include "leat/distributions/detail/truncated_normal_pieces.hpp" // the moments
 #include "leat/distributions/detail/ziggurat.hpp"
 #include "leat/uniform/unit.hpp"
 
-#include <bit>
 #include <cstdint>
 #include <limits>
-#include <type_traits>
 
 namespace leat {
 
 template <detail::portable_real Real>
 class truncated_normal;
-
-namespace detail {
-
-/// The least normal number above x, which is not NaN and below infinity.
-template <portable_real Real>
-constexpr Real normal_above(Real x) noexcept {
-    using word = std::conditional_t<sizeof(Real) == 8, std::uint64_t, std::uint32_t>;
-    constexpr Real least = std::numeric_limits<Real>::min();
-    if (x > -least && x < least) { // 0 and the subnormal numbers
-        return least;
-    }
-    const word bits = std::bit_cast<word>(x);
-    const Real next = std::bit_cast<Real>(x < 0 ? word(bits - 1) : word(bits + 1));
-    return next > -least && next < least ? least : next;
-}
-
-} // namespace detail
 
 /// The parameters of `truncated_normal`.
 template <detail::portable_real Real = double>
@@ -390,35 +371,19 @@ constexpr detail::moments truncated_normal<Real>::moments_of_draws() const noexc
     }
     const auto low = static_cast<double>(lo());
     const auto high = static_cast<double>(hi());
-    const auto in_units = [](double x) { return detail::split(x); };
-    if (holds_mean_) { // beyond 14 sd nothing counts
-        const double a = over_sd(low, centre());
-        const double b = over_sd(high, centre());
-        const real from = a < -14 ? -14.0 : a;
-        const real to = b > 14 ? 14.0 : b;
-        const detail::moments m = detail::moments_on_unit([&](double t) {
-            const real x = from + (to - from) * t;
-            return detail::natural_exp((x * x * -0.5).value);
-        });
-        const detail::scaled span = in_units((to - from).value) * in_units(sd_());
-        const real mean = from + (to - from) * m.mean;
-        return {static_cast<double>(inside((real(centre()) + mean * sd_()).value)),
-                (span * span * in_units(m.variance)).value()};
+    const detail::normal_piece piece =
+        holds_mean_ ? detail::middle_piece(over_sd(low, centre()), over_sd(high, centre()))
+                    : detail::far_piece(
+                          downwards_ ? over_sd(centre(), high) : over_sd(low, centre()), width_);
+    const detail::scaled span = detail::split(piece.length) * detail::split(sd_());
+    const double variance = (span * span * detail::split(piece.on_unit.variance)).value();
+    if (holds_mean_) {
+        const real mean = real(piece.from) + real(piece.length) * piece.on_unit.mean;
+        return {static_cast<double>(inside((real(centre()) + mean * sd_()).value)), variance};
     }
-    // From the near end on, up to where the density has fallen by e^-80.
-    const double distance = downwards_ ? over_sd(centre(), high) : over_sd(low, centre());
-    const real a = distance > 0x1p200 ? 0x1p200 : distance;
-    const real reach = real(160.0) / (a + detail::square_root((a * a + 160.0).value));
-    const real to = width_ < reach.value ? real(width_) : reach;
-    const detail::moments m = detail::moments_on_unit([&](double t) {
-        const real x = to * t;
-        return detail::natural_exp((-(x * (x * 0.5 + a))).value);
-    });
-    const detail::scaled span = in_units(to.value) * in_units(sd_());
-    const double step = (span * in_units(m.mean)).value();
+    const double step = (span * detail::split(piece.on_unit.mean)).value();
     const real end = downwards_ ? high : low;
-    return {static_cast<double>(inside((downwards_ ? end - step : end + step).value)),
-            (span * span * in_units(m.variance)).value()};
+    return {static_cast<double>(inside((downwards_ ? end - step : end + step).value)), variance};
 }
 
 } // namespace leat

@@ -11,6 +11,7 @@
 #include <bit>
 #include <cstdint>
 #include <limits>
+#include <type_traits>
 
 namespace leat::detail {
 
@@ -50,6 +51,19 @@ constexpr Real into_signed(double x) noexcept {
         return static_cast<Real>(x);
     }
     return end_of_range<Real>(x);
+}
+
+/// The least normal number above x, which is not NaN and below infinity.
+template <portable_real Real>
+constexpr Real normal_above(Real x) noexcept {
+    using word = std::conditional_t<sizeof(Real) == 8, std::uint64_t, std::uint32_t>;
+    constexpr Real least = std::numeric_limits<Real>::min();
+    if (x > -least && x < least) { // 0 and the subnormal numbers
+        return least;
+    }
+    const word bits = std::bit_cast<word>(x);
+    const Real next = std::bit_cast<Real>(x < 0 ? word(bits - 1) : word(bits + 1));
+    return next > -least && next < least ? least : next;
 }
 
 } // namespace leat::detail
