@@ -160,25 +160,15 @@ public:
     template <class Char, class Traits>
     friend std::basic_ostream<Char, Traits>& operator<<(std::basic_ostream<Char, Traits>& os,
                                                         const additive_feedback& e) {
-        const state_type words = e.state();
-        for (std::size_t i = 0; i < long_lag; ++i) {
-            if (i > 0) {
-                detail::write_char(os, ' ');
-            }
-            detail::write_unsigned(os, words[i]);
-        }
+        detail::write_words(os, e.state());
         return os;
     }
     template <class Char, class Traits>
     friend std::basic_istream<Char, Traits>& operator>>(std::basic_istream<Char, Traits>& is,
                                                         additive_feedback& e) {
         state_type words{};
-        for (std::uint32_t& word : words) {
-            std::uint64_t x = 0;
-            if (!detail::read_unsigned(is, 0xFFFFFFFFu, x)) {
-                return is;
-            }
-            word = static_cast<std::uint32_t>(x);
+        if (!detail::read_words(is, words)) {
+            return is;
         }
         if (has_odd(words)) {
             e.words_ = words;

@@ -105,26 +105,16 @@ public:
     template <class Char, class Traits>
     friend std::basic_ostream<Char, Traits>& operator<<(std::basic_ostream<Char, Traits>& os,
                                                         const posix48& e) {
-        const state_type words = e.state();
-        detail::write_unsigned(os, words[0]);
-        detail::write_char(os, ' ');
-        detail::write_unsigned(os, words[1]);
-        detail::write_char(os, ' ');
-        detail::write_unsigned(os, words[2]);
+        detail::write_words(os, e.state());
         return os;
     }
     template <class Char, class Traits>
     friend std::basic_istream<Char, Traits>& operator>>(std::basic_istream<Char, Traits>& is,
                                                         posix48& e) {
         state_type words{};
-        for (std::uint16_t& word : words) {
-            std::uint64_t x = 0;
-            if (!detail::read_unsigned(is, 0xFFFF, x)) {
-                return is;
-            }
-            word = static_cast<std::uint16_t>(x);
+        if (detail::read_words(is, words)) {
+            e.x_ = joined(words);
         }
-        e.x_ = joined(words);
         return is;
     }
 

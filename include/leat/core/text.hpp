@@ -105,8 +105,8 @@ bool read_unsigned(std::basic_istream<Char, Traits>& is, std::uint64_t max, std:
 }
 
 /// Writes whole numbers, one space between two.
-template <class Char, class Traits, std::size_t N>
-void write_words(std::basic_ostream<Char, Traits>& os, const std::array<std::uint64_t, N>& words) {
+template <class Char, class Traits, class Word, std::size_t N>
+void write_words(std::basic_ostream<Char, Traits>& os, const std::array<Word, N>& words) {
     for (std::size_t i = 0; i < N; ++i) {
         if (i != 0) {
             write_char(os, ' ');
@@ -115,13 +115,15 @@ void write_words(std::basic_ostream<Char, Traits>& os, const std::array<std::uin
     }
 }
 
-/// Reads whole numbers below 2^64; on anything else sets failbit and returns false.
-template <class Char, class Traits, std::size_t N>
-bool read_words(std::basic_istream<Char, Traits>& is, std::array<std::uint64_t, N>& words) {
-    for (std::uint64_t& word : words) {
-        if (!read_unsigned(is, ~std::uint64_t{0}, word)) {
+/// Reads whole numbers that fit in a word; on anything else sets failbit and returns false.
+template <class Char, class Traits, class Word, std::size_t N>
+bool read_words(std::basic_istream<Char, Traits>& is, std::array<Word, N>& words) {
+    for (Word& word : words) {
+        std::uint64_t x = 0;
+        if (!read_unsigned(is, std::numeric_limits<Word>::max(), x)) {
             return false;
         }
+        word = static_cast<Word>(x);
     }
     return true;
 }

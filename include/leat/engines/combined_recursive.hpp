@@ -228,13 +228,7 @@ public:
     template <class Char, class Traits>
     friend std::basic_ostream<Char, Traits>& operator<<(std::basic_ostream<Char, Traits>& os,
                                                         const mrg32k3a& engine) {
-        const state_type words = engine.state();
-        for (std::size_t i = 0; i < 6; ++i) {
-            if (i > 0) {
-                detail::write_char(os, ' ');
-            }
-            detail::write_unsigned(os, words[i]);
-        }
+        detail::write_words(os, engine.state());
         return os;
     }
     template <class Char, class Traits>

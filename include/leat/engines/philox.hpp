@@ -195,13 +195,7 @@ public:
     template <class Char, class Traits>
     friend std::basic_ostream<Char, Traits>& operator<<(std::basic_ostream<Char, Traits>& os,
                                                         const philox4& e) {
-        const state_type words = e.state();
-        for (std::size_t i = 0; i < words.size(); ++i) {
-            if (i > 0) {
-                detail::write_char(os, ' ');
-            }
-            detail::write_unsigned(os, words[i]);
-        }
+        detail::write_words(os, e.state());
         return os;
     }
     template <class Char, class Traits>
